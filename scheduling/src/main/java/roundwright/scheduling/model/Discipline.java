@@ -20,6 +20,10 @@ public record Discipline(
     BigDecimal carrySeconds,
     SortedSet<String> needs,
     Measure measure) {
+  public static final BigDecimal HANDLING_SECONDS = BigDecimal.valueOf(45);
+  public static final BigDecimal SCRAMBLE_SECONDS = BigDecimal.valueOf(25);
+  public static final BigDecimal CARRY_SECONDS = BigDecimal.valueOf(6);
+
   public Discipline {
     needs = java.util.Collections.unmodifiableSortedSet(new TreeSet<>(needs));
   }

@@ -21,6 +21,9 @@ public record Person(
     boolean newcomer,
     int maxDutyMinutesPerDay,
     Optional<BigDecimal> share) {
+  /** The most duty a day of somebody who names none. */
+  public static final int MAX_DUTY_MINUTES_PER_DAY = 240;
+
   public Person {
     entries = List.copyOf(entries);
     available = available.map(Window::merged);

@@ -43,6 +43,9 @@ public record Round(
     Optional<Instant> notBefore,
     Optional<Instant> notAfter,
     Optional<List<String>> entrants) {
+  /** The time limit of a round that names none. */
+  public static final BigDecimal TIME_LIMIT_SECONDS = BigDecimal.valueOf(600);
+
   public Round {
     halls = halls.map(List::copyOf);
     entrants = entrants.map(List::copyOf);

@@ -1,0 +1,4 @@
+package roundwright.server.ids;
+
+/** An account's row. */
+public record AccountId(long number) {}

@@ -1,0 +1,4 @@
+package roundwright.server.ids;
+
+/** An event's row. */
+public record EventId(long number) {}

@@ -3,7 +3,9 @@ package roundwright.server.event;
 import java.util.List;
 import java.util.stream.Collectors;
 
-/** Everything that is wrong with an event's CSVs, told at once; one line for each in the message. */
+/**
+ * Everything that is wrong with an event's CSVs, told at once; one line for each in the message.
+ */
 public final class CsvProblems extends Exception {
   private static final long serialVersionUID = 1;
 

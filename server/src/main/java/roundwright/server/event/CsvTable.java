@@ -91,7 +91,7 @@ record CsvTable(String file, Optional<String> owner, List<Column> columns) {
 
     /** Puts a cell, which is not empty, where it belongs. */
     void put(ObjectNode row, String cell) {
-      String[] keys = path.split("\\.");
+      String[] keys = path.split("\\.", -1);
       ObjectNode holder = row;
       for (int i = 0; i < keys.length - 1; i++) {
         holder = holder.withObjectProperty(keys[i]);
@@ -119,7 +119,7 @@ record CsvTable(String file, Optional<String> owner, List<Column> columns) {
           if (cell.equals(NO_WORDS)) {
             yield words;
           }
-          for (String word : cell.strip().split("\\s+")) {
+          for (String word : cell.strip().split("\\s+", -1)) {
             words.add(word);
           }
           yield words;
@@ -131,7 +131,7 @@ record CsvTable(String file, Optional<String> owner, List<Column> columns) {
     /** The cell of a row's object; empty where the object has nothing there. */
     String cell(JsonNode row, int index) {
       JsonNode node = row;
-      for (String step : path.split("\\.")) {
+      for (String step : path.split("\\.", -1)) {
         node = node.path(step);
       }
       if (node.isMissingNode() || node.isNull()) {

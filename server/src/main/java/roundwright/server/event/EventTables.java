@@ -169,7 +169,9 @@ final class EventTables {
     list(pins.putArray("duties"), "pins.duties", rows(EventCsv.DUTY_PINS, texts), "");
   }
 
-  /** Adds rows to a list of the tree, and remembers them as owners of that kind where it has one. */
+  /**
+   * Adds rows to a list of the tree, and remembers them as owners of that kind where it has one.
+   */
   private void list(ArrayNode list, String path, List<Row> rows, String kind) {
     for (Row row : rows) {
       add(list, path, row, kind);
@@ -325,8 +327,7 @@ final class EventTables {
         .properties()
         .forEach(
             weight ->
-                out.accept(
-                    EventCsv.WEIGHTS, List.of(weight.getKey(), weight.getValue().asText())));
+                out.accept(EventCsv.WEIGHTS, List.of(weight.getKey(), weight.getValue().asText())));
     all(EventCsv.GROUP_PINS, root.path("pins").path("groups"), "", out);
     all(EventCsv.COMPETITOR_PINS, root.path("pins").path("competitors"), "", out);
     all(EventCsv.DUTY_PINS, root.path("pins").path("duties"), "", out);

@@ -113,7 +113,7 @@ create table solve_run (
   beat_at timestamp with time zone not null,
   ended_at timestamp with time zone,
   stage varchar(20),
-  elapsed_seconds numeric(18, 9),
+  elapsed_seconds numeric(18, 3),
   steps bigint,
   first_breaches bigint,
   first_gaps bigint,

@@ -3,8 +3,10 @@ package roundwright.scheduling.file;
 import com.fasterxml.jackson.databind.JsonNode;
 import com.fasterxml.jackson.databind.node.ArrayNode;
 import com.fasterxml.jackson.databind.node.ObjectNode;
+import java.nio.charset.StandardCharsets;
 import java.util.LinkedHashMap;
 import java.util.Map;
+import java.util.Optional;
 import java.util.Set;
 
 /**
@@ -33,6 +35,41 @@ public final class Extras {
 
   public boolean isEmpty() {
     return byPlace.isEmpty();
+  }
+
+  /** All keys as one JSON text, for whoever keeps an event elsewhere than in a file. */
+  public String json() {
+    ObjectNode all = Fields.newObject();
+    byPlace.forEach(
+        (place, keys) -> {
+          ObjectNode there = all.putObject(place);
+          keys.forEach(there::set);
+        });
+    return all.toString();
+  }
+
+  /**
+   * What {@link #json()} gave.
+   *
+   * @throws FileProblems where the text is none of it
+   */
+  public static Extras of(String json) throws FileProblems {
+    Problems problems = new Problems();
+    JsonNode all = JsonText.tree(json.getBytes(StandardCharsets.UTF_8), problems);
+    problems.throwIfAny();
+    Map<String, Map<String, JsonNode>> byPlace = new LinkedHashMap<>();
+    for (Map.Entry<String, JsonNode> place : all.properties()) {
+      Map<String, JsonNode> keys = new LinkedHashMap<>();
+      place.getValue().properties().forEach(key -> keys.put(key.getKey(), key.getValue()));
+      byPlace.put(place.getKey(), keys);
+    }
+    return byPlace.isEmpty() ? NONE : new Extras(byPlace);
+  }
+
+  /** A text, number or flag beside a person, as text; empty where there is none. */
+  public Optional<String> ofPerson(String person, String key) {
+    JsonNode kept = byPlace.getOrDefault("/people/#" + person, Map.of()).get(key);
+    return Optional.ofNullable(kept).filter(JsonNode::isValueNode).map(JsonNode::asText);
   }
 
   private static void collect(

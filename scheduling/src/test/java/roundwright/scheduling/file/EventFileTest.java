@@ -127,6 +127,18 @@ final class EventFileTest {
   }
 
   @Test
+  void own_keys_can_be_kept_apart_and_put_back() throws FileProblems {
+    EventFile file = EventFile.read(EVERY_KEY);
+    Extras kept = Extras.of(file.extras().json());
+    assertEquals(file.extras(), kept);
+    assertEquals(file.json(), new EventFile(file.event(), kept).json());
+    String first = file.event().people().get(0).id();
+    assertEquals(Optional.of("17"), kept.ofPerson(first, "x-badge"));
+    assertEquals(Optional.empty(), kept.ofPerson(first, "x-nothing"));
+    assertEquals(Extras.NONE, Extras.of(Extras.NONE.json()));
+  }
+
+  @Test
   void own_keys_follow_their_person_when_the_list_changes_and_go_with_them() throws FileProblems {
     EventFile file = EventFile.read(EVERY_KEY);
     Event event = file.event();

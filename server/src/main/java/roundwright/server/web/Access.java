@@ -122,7 +122,7 @@ public final class Access {
   private List<String> linkTokens(Context ctx) {
     return cookies
         .read(ctx, LINKS)
-        .map(joined -> Arrays.stream(joined.split("\\.")).limit(MOST_LINKS).toList())
+        .map(joined -> Arrays.stream(joined.split("\\.", -1)).limit(MOST_LINKS).toList())
         .orElse(List.of());
   }
 

@@ -20,19 +20,19 @@ class SignInTest {
   @RegisterExtension static final Served SERVED = new Served();
 
   @Test
-  void theFirstLinkMakesOneAccountAndIsThenSpent() {
+  void the_first_link_makes_one_account_and_is_then_spent() {
     Browser host = SERVED.hostBrowser();
     assertEquals(200, host.get("/events").statusCode());
     assertTrue(SERVED.app().firstSetUpLink().isEmpty(), "a second account by link");
   }
 
   @Test
-  void aMadeUpSetUpLinkLeadsNowhere() {
+  void a_made_up_set_up_link_leads_nowhere() {
     assertEquals(404, SERVED.browser().get("/setup/AAAAAAAAAAAAAAAAAAAAAAAAAAA").statusCode());
   }
 
   @Test
-  void withoutSigningInOneIsAskedToAndThenLedBack() {
+  void without_signing_in_one_is_asked_to_and_then_led_back() {
     SERVED.hostBrowser();
     Browser browser = SERVED.browser();
     HttpResponse<String> asked = browser.get("/events");
@@ -55,19 +55,19 @@ class SignInTest {
     "/\\elsewhere,/events",
     "'',/events"
   })
-  void nobodyIsLedToAnotherServer(String asked, String led) {
+  void nobody_is_led_to_another_server(String asked, String led) {
     assertEquals(led, AccountRoutes.ownPath(asked));
   }
 
   @Test
-  void htmxIsToldToLeaveForTheSignInPage() {
+  void htmx_is_told_to_leave_for_the_sign_in_page() {
     HttpResponse<String> answer = SERVED.browser().fragment("/events");
     assertEquals("/sign-in", answer.headers().firstValue("HX-Redirect").orElse(""));
     assertEquals("", answer.body());
   }
 
   @Test
-  void signingOutEndsTheSessionItself() {
+  void signing_out_ends_the_session_itself() {
     Browser host = SERVED.hostBrowser();
     HttpCookie session = session(host);
     host.submit("/events", "/sign-out", Map.of());
@@ -77,7 +77,7 @@ class SignInTest {
   }
 
   @Test
-  void aSessionIsNewAtEverySignInAndHiddenFromScripts() {
+  void a_session_is_new_at_every_sign_in_and_hidden_from_scripts() {
     Browser host = SERVED.hostBrowser();
     HttpCookie first = session(host);
     SERVED.signIn(host, Served.HOST_NAME, Served.HOST_PASSWORD);
@@ -87,7 +87,7 @@ class SignInTest {
   }
 
   @Test
-  void anUnknownNameAndAWrongPasswordLookTheSame() {
+  void an_unknown_name_and_a_wrong_password_look_the_same() {
     SERVED.hostBrowser();
     Browser browser = SERVED.browser();
     String unknown = wrong(browser, "Nobody Here");
@@ -100,7 +100,7 @@ class SignInTest {
   }
 
   @Test
-  void fromTheFifthWrongPasswordOnTheAccountWaitsButIsNeverLocked() {
+  void from_the_fifth_wrong_password_on_the_account_waits_but_is_never_locked() {
     SERVED.hostBrowser();
     Browser browser = SERVED.browser();
     for (int i = 0; i < 5; i++) {
@@ -135,12 +135,12 @@ class SignInTest {
     "Password1234,account.password.common",
     "Ottoline Vane1,account.password.common"
   })
-  void aPasswordIsLongAndNotGuessedEasily(String password, String complaint) {
+  void a_password_is_long_and_not_guessed_easily(String password, String complaint) {
     assertEquals(complaint, Passwords.complaint(password, "Ottoline Vane"));
   }
 
   @Test
-  void aPasswordMayHave64LettersOfAnyScript() {
+  void a_password_may_have_64_letters_of_any_script() {
     assertEquals("", Passwords.complaint("söме语ات".repeat(8), "x"));
     assertTrue(Passwords.fits("é pass phrase", Passwords.hash("e\u0301 pass phrase")));
     assertTrue(Passwords.hash("four small kettles").startsWith("$argon2id$v=19$m=19456,t=2,p=1$"));

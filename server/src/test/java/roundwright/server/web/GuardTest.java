@@ -21,7 +21,7 @@ class GuardTest {
 
   @ParameterizedTest
   @ValueSource(strings = {"/sign-in", "/static/css/tokens.css", "/no-such-page", "/events"})
-  void everyAnswerCarriesTheSecurityHeaders(String path) {
+  void every_answer_carries_the_security_headers(String path) {
     HttpResponse<String> answer = SERVED.browser().get(path);
     assertEquals(
         "default-src 'self'; object-src 'none'; base-uri 'none'; frame-ancestors 'none'",
@@ -39,13 +39,13 @@ class GuardTest {
     "Origin,null,422",
     "X-Other,x,422"
   })
-  void aChangeIsTakenOnlyFromAPageOfOurs(String header, String text, int status) {
+  void a_change_is_taken_only_from_a_page_of_ours(String header, String text, int status) {
     assertEquals(
         status, SERVED.browser().submit("/sign-in", "/sign-in", FIELDS, header, text).statusCode());
   }
 
   @Test
-  void ourOwnOriginIsOurs() {
+  void our_own_origin_is_ours() {
     String own = "http://127.0.0.1:" + SERVED.app().port();
     assertEquals(
         422, SERVED.browser().submit("/sign-in", "/sign-in", FIELDS, "Origin", own).statusCode());
@@ -53,7 +53,7 @@ class GuardTest {
 
   @ParameterizedTest
   @ValueSource(strings = {"", "AAAA", "AAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAAA", "%%%"})
-  void aChangeWithoutTheFormsTokenIsRefused(String token) {
+  void a_change_without_the_forms_token_is_refused(String token) {
     Browser browser = SERVED.browser();
     browser.get("/sign-in");
     String body = Browser.encoded(Map.of("name", "x", "password", "y", "token", token));
@@ -61,7 +61,7 @@ class GuardTest {
   }
 
   @Test
-  void anotherBrowsersTokenIsRefused() {
+  void another_browsers_token_is_refused() {
     String token = SERVED.browser().tokenAt("/sign-in");
     Browser other = SERVED.browser();
     other.tokenAt("/sign-in");
@@ -70,13 +70,13 @@ class GuardTest {
   }
 
   @Test
-  void tokensAreMaskedAfreshOnEveryPage() {
+  void tokens_are_masked_afresh_on_every_page() {
     Browser browser = SERVED.browser();
     assertFalse(browser.tokenAt("/sign-in").equals(browser.tokenAt("/sign-in")));
   }
 
   @Test
-  void aHeaderCannotTurnAReadingIntoAChange() {
+  void a_header_cannot_turn_a_reading_into_a_change() {
     assertEquals(
         400, SERVED.browser().get("/sign-in", "X-HTTP-Method-Override", "POST").statusCode());
   }
@@ -92,20 +92,20 @@ class GuardTest {
         "/events/..;/sign-in",
         "//events"
       })
-  void pathTricksLeadNowhere(String path) {
+  void path_tricks_lead_nowhere(String path) {
     int status = SERVED.browser().get(path).statusCode();
     assertTrue(status == 400 || status == 404, path + " gave " + status);
   }
 
   @Test
-  void aBodyBeyondTheBoundIsRefused() {
+  void a_body_beyond_the_bound_is_refused() {
     Browser browser = SERVED.browser();
     String body = "token=" + "x".repeat(300 * 1024);
     assertEquals(413, browser.send("POST", "/sign-in", body).statusCode());
   }
 
   @Test
-  void anAssetIsKeptForEverUnderItsHashAndCheckedOtherwise() {
+  void an_asset_is_kept_for_ever_under_its_hash_and_checked_otherwise() {
     Browser browser = SERVED.browser();
     HttpResponse<String> plain = browser.get("/static/css/tokens.css");
     String tag = plain.headers().firstValue("ETag").orElseThrow();

@@ -1,0 +1,149 @@
+package roundwright.server.planning;
+
+import java.math.BigDecimal;
+import java.time.LocalDate;
+import java.time.ZonedDateTime;
+import java.util.List;
+import java.util.Optional;
+import roundwright.server.web.EventMark;
+import roundwright.server.web.Lanes;
+import roundwright.server.web.Ticket;
+
+/**
+ * The day plan of a draft: lanes of tickets, what a rule has to say, the search, one group's crew.
+ *
+ * @param score empty where nothing is planned yet
+ * @param findings the worst first, at most as many as a page can show
+ * @param moreFindings how many are left out
+ */
+public record PlanPage(
+    EventMark event,
+    DraftMark draft,
+    LocalDate day,
+    Lanes lanes,
+    Optional<Score> score,
+    List<FindingLine> findings,
+    int moreFindings,
+    SolvePanel solve) {
+  public PlanPage {
+    findings = List.copyOf(findings);
+  }
+
+  /**
+   * A draft.
+   *
+   * @param publishedEdition number of the newest edition of the event, 0 where none is out
+   * @param published true where that edition is this draft as it stands
+   */
+  public record DraftMark(
+      long id,
+      int number,
+      String name,
+      int version,
+      ZonedDateTime changedAt,
+      int publishedEdition,
+      boolean published) {}
+
+  /** A plan's score. */
+  public record Score(long breaches, long gaps, BigDecimal strain) {}
+
+  /**
+   * What a rule has to say.
+   *
+   * @param level {@code breach}, {@code gap}, {@code strain} or {@code notice}
+   * @param amount for strain its weighted share, else the rule's amount
+   * @param rule the rule's word
+   * @param says the sentence
+   * @param group id of the group concerned, empty where none is
+   * @param day that of the group, null where there is none
+   */
+  public record FindingLine(
+      String level, BigDecimal amount, String rule, String says, String group, LocalDate day) {}
+
+  /**
+   * A search: asked for, under way or over.
+   *
+   * @param state {@code idle} before the first, else waiting, running, done, stopped, interrupted,
+   *     refused
+   * @param run its id, 0 before the first
+   * @param stage the engine's word for what it is doing, empty where unknown
+   * @param stillWrong one sentence a line, the worst first
+   * @param trouble why it was refused or interrupted, as the end of a sentence's key; else empty
+   */
+  public record SolvePanel(
+      String state,
+      long run,
+      long seed,
+      BigDecimal elapsedSeconds,
+      int wantedSeconds,
+      String stage,
+      Optional<Score> first,
+      Optional<Score> best,
+      List<String> stillWrong,
+      String trouble) {
+    public SolvePanel {
+      stillWrong = List.copyOf(stillWrong);
+    }
+
+    public boolean underWay() {
+      return state.equals("waiting") || state.equals("running");
+    }
+  }
+
+  /** One group with everybody in it. */
+  public record GroupCrew(Ticket ticket, List<RoleCrew> roles, List<PersonLine> competitors) {
+    public GroupCrew {
+      roles = List.copyOf(roles);
+      competitors = List.copyOf(competitors);
+    }
+  }
+
+  /**
+   * The people of one role.
+   *
+   * @param role {@code judge}, {@code scrambler}, {@code runner}
+   */
+  public record RoleCrew(String role, int wanted, List<PersonLine> people) {
+    public RoleCrew {
+      people = List.copyOf(people);
+    }
+
+    public int missing() {
+      return Math.max(0, wanted - people.size());
+    }
+  }
+
+  /** Somebody, as the organiser knows them. */
+  public record PersonLine(String person, String name, boolean newcomer, boolean minor) {}
+
+  /** The crews of a draft: all groups of a day to choose from, and the one chosen. */
+  public record CrewsPage(
+      EventMark event,
+      DraftMark draft,
+      LocalDate day,
+      Optional<Score> score,
+      List<Ticket> tickets,
+      Optional<GroupCrew> chosen) {
+    public CrewsPage {
+      tickets = List.copyOf(tickets);
+    }
+  }
+
+  /**
+   * What publishing would do, to be checked before it is done.
+   *
+   * @param edition the number that the edition would get
+   * @param groups how many groups it holds
+   * @param people how many people have a commitment in it
+   * @param changed how many people have another commitment than in the newest edition; all of them
+   *     where none is out
+   */
+  public record PublishPage(
+      EventMark event,
+      DraftMark draft,
+      Score score,
+      int edition,
+      int groups,
+      int people,
+      int changed) {}
+}

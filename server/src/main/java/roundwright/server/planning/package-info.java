@@ -1,0 +1,2 @@
+/** The organiser's day plan and crews: drafts, searches, publishing. */
+package roundwright.server.planning;

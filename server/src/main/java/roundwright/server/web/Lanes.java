@@ -1,0 +1,73 @@
+package roundwright.server.web;
+
+import java.time.LocalDate;
+import java.time.LocalTime;
+import java.util.List;
+
+/**
+ * One day of an event as lanes: a lane a hall, time running on.
+ *
+ * @param fromHour first hour of the axis
+ * @param hours how many hours the axis has, at least 1
+ * @param utc the zone's distance from UTC on that day, such as {@code UTC+1}
+ */
+public record Lanes(LocalDate day, int fromHour, int hours, String utc, List<VenueLanes> venues) {
+  public Lanes {
+    venues = List.copyOf(venues);
+  }
+
+  /** The full hours of the axis, its end included. */
+  public List<Integer> fullHours() {
+    return java.util.stream.IntStream.rangeClosed(fromHour, fromHour + hours).boxed().toList();
+  }
+
+  /** Every ticket of the day in order of start, then hall. */
+  public List<Ticket> down() {
+    return venues.stream()
+        .flatMap(venue -> venue.lanes().stream())
+        .flatMap(lane -> lane.tickets().stream())
+        .sorted(
+            java.util.Comparator.comparing(Ticket::start).thenComparing(one -> one.hall().letter()))
+        .toList();
+  }
+
+  public List<HallMark> halls() {
+    return venues.stream().flatMap(venue -> venue.lanes().stream()).map(Lane::hall).toList();
+  }
+
+  /**
+   * A venue's lanes.
+   *
+   * @param address empty where none is known
+   */
+  public record VenueLanes(String name, String address, List<Lane> lanes) {
+    public VenueLanes {
+      lanes = List.copyOf(lanes);
+    }
+  }
+
+  /** A hall's lane. */
+  public record Lane(
+      HallMark hall,
+      int stations,
+      List<String> features,
+      List<FixedBlock> fixedPoints,
+      List<Ticket> tickets) {
+    public Lane {
+      features = List.copyOf(features);
+      fixedPoints = List.copyOf(fixedPoints);
+      tickets = List.copyOf(tickets);
+    }
+  }
+
+  /** A fixed point in a hall on that day. */
+  public record FixedBlock(String name, LocalTime from, long minutes) {
+    public LocalTime to() {
+      return from.plusMinutes(minutes);
+    }
+
+    public String slot() {
+      return "h" + from.getHour() + " m" + from.getMinute() + " for" + minutes;
+    }
+  }
+}

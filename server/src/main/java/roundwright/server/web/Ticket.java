@@ -1,0 +1,95 @@
+package roundwright.server.web;
+
+import java.time.Duration;
+import java.time.ZonedDateTime;
+import java.util.List;
+import java.util.Locale;
+
+/**
+ * What a ticket says: one group, or a whole round where the public schedule shows rounds.
+ *
+ * @param group the group's lasting id; of a round's ticket, that of its first group there
+ * @param discipline its plain name
+ * @param round number of the round within the discipline
+ * @param finalRound true for a discipline's last round where it has more than one
+ * @param number of the group within its round; 0 for a whole round
+ * @param groups how many groups the round has
+ * @param start in the hall's venue's zone, as is the end
+ * @param competitors how many
+ * @param crew how many places are filled, by role, in the order judges, scramblers, runners; roles
+ *     that are not wanted are left out
+ * @param breaches findings of that level that name this group, as are gaps
+ * @param joins true where the same round's next group follows in the same hall within the set-up
+ *     time
+ * @param pinned true where a pin holds hall or start
+ */
+public record Ticket(
+    String group,
+    HallMark hall,
+    String discipline,
+    int round,
+    boolean finalRound,
+    int number,
+    int groups,
+    ZonedDateTime start,
+    ZonedDateTime end,
+    State state,
+    int competitors,
+    List<Crew> crew,
+    long breaches,
+    long gaps,
+    boolean joins,
+    boolean pinned) {
+  public Ticket {
+    crew = List.copyOf(crew);
+  }
+
+  /** Live states of a group, in order. */
+  public enum State {
+    PLANNED,
+    NEXT,
+    REPORT,
+    SOLVING,
+    CLOSED,
+    HELD,
+    DROPPED;
+
+    /** The word in style names and keys of sentences. */
+    public String word() {
+      return name().toLowerCase(Locale.ROOT);
+    }
+  }
+
+  /** One role's places. */
+  public record Crew(String role, int filled, int wanted) {
+    public int missing() {
+      return Math.max(0, wanted - filled);
+    }
+  }
+
+  public long minutes() {
+    return Duration.between(start, end).toMinutes();
+  }
+
+  public int crewFilled() {
+    return crew.stream().mapToInt(Crew::filled).sum();
+  }
+
+  public int crewWanted() {
+    return crew.stream().mapToInt(Crew::wanted).sum();
+  }
+
+  /** The classes that place it on an axis of time. */
+  public String slot() {
+    return "h" + start.getHour() + " m" + start.getMinute() + " for" + minutes();
+  }
+
+  /** Key of the sentence that names its round and group. */
+  public String partKey() {
+    String round = finalRound ? "ticket.final" : "ticket.round";
+    if (number == 0 || groups <= 1) {
+      return round;
+    }
+    return round + ".group";
+  }
+}

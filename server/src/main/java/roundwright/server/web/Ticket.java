@@ -6,13 +6,15 @@ import java.util.List;
 import java.util.Locale;
 
 /**
- * What a ticket says: one group, or a whole round where the public schedule shows rounds.
+ * What a ticket says: one group, or, on the public schedule, those groups of a round that follow
+ * each other in a hall without another round between them.
  *
- * @param group the group's lasting id; of a round's ticket, that of its first group there
+ * @param group the group's lasting id; of several groups that of the first
  * @param discipline its plain name
  * @param round number of the round within the discipline
  * @param finalRound true for a discipline's last round where it has more than one
- * @param number of the group within its round; 0 for a whole round
+ * @param number of the group within its round; of several the smallest
+ * @param lastNumber the same as {@code number}; of several groups the largest
  * @param groups how many groups the round has
  * @param start in the hall's venue's zone, as is the end
  * @param competitors how many
@@ -30,6 +32,7 @@ public record Ticket(
     int round,
     boolean finalRound,
     int number,
+    int lastNumber,
     int groups,
     ZonedDateTime start,
     ZonedDateTime end,
@@ -84,12 +87,15 @@ public record Ticket(
     return "h" + start.getHour() + " m" + start.getMinute() + " for" + minutes();
   }
 
-  /** Key of the sentence that names its round and group. */
+  /**
+   * Key of the sentence that names its round and groups; its places are filled with round, number
+   * and lastNumber.
+   */
   public String partKey() {
     String round = finalRound ? "ticket.final" : "ticket.round";
-    if (number == 0 || groups <= 1) {
+    if (lastNumber - number + 1 >= groups) {
       return round;
     }
-    return round + ".group";
+    return round + (lastNumber > number ? ".groups" : ".group");
   }
 }

@@ -324,6 +324,20 @@ public final class Scene {
     return verdict(Optional.empty());
   }
 
+  /** Ids of those with an entry in a discipline, in the order of the file. */
+  @SuppressWarnings("unchecked")
+  public List<String> entered(String discipline) {
+    List<String> entered = new ArrayList<>();
+    for (Object person : list(event, "people")) {
+      for (Object entry : list((Map<String, Object>) person, "entries")) {
+        if (((Map<String, Object>) entry).get("discipline").equals(discipline)) {
+          entered.add((String) ((Map<String, Object>) person).get("id"));
+        }
+      }
+    }
+    return entered;
+  }
+
   /** The verdict with a moment before which nothing can be changed. */
   public Verdict verdictAt(String time) {
     return verdict(Optional.of(time(time)));

@@ -18,11 +18,12 @@ import roundwright.scheduling.model.Round;
 
 /** A plan in order: its groups by round and hall, its commitments by person, each in time. */
 final class Book {
-  /** Groups in time: by start, then hall id, then number. */
+  /** Groups in time: by start, then hall id, then number; of other rounds' too, then by end. */
   static final Comparator<Group> IN_TIME =
       Comparator.comparing(Group::start)
           .thenComparing(Group::hall)
           .thenComparingInt(Group::number)
+          .thenComparing(Group::end)
           .thenComparing(Group::id);
 
   private final Directory event;

@@ -53,7 +53,12 @@ final class Notes {
     }
     total = total.add(amount);
     if (telling) {
-      findings.add(new Finding(rule, amount, group, people, says.get()));
+      findings.add(new Finding(rule, amount, group, people, asSentence(says.get())));
     }
+  }
+
+  /** Begins with a capital where a word of ours stands first; a name keeps its own spelling. */
+  private static String asSentence(String says) {
+    return says.startsWith("group ") ? "G" + says.substring(1) : says;
   }
 }

@@ -25,4 +25,9 @@ public record Board(
   public Board {
     names = List.copyOf(names);
   }
+
+  /** The names as the board has room for them. */
+  public BoardNames fitted() {
+    return BoardNames.of(names);
+  }
 }

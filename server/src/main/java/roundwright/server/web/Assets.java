@@ -8,6 +8,8 @@ import java.io.ByteArrayOutputStream;
 import java.io.IOException;
 import java.io.InputStream;
 import java.io.UncheckedIOException;
+import java.net.URI;
+import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.HexFormat;
@@ -16,6 +18,7 @@ import java.util.Optional;
 import java.util.Properties;
 import java.util.Set;
 import java.util.concurrent.ConcurrentHashMap;
+import java.util.regex.Matcher;
 import java.util.regex.Pattern;
 import java.util.zip.GZIPOutputStream;
 
@@ -28,6 +31,8 @@ public final class Assets {
   public static final String PATH = "/static/";
 
   private static final Pattern PLAIN = Pattern.compile("[A-Za-z0-9_-]+([./][A-Za-z0-9_-]+)*");
+  private static final Pattern NAMED_FILE =
+      Pattern.compile("@import \"(?<import>[^\"]+)\";|url\\(\"(?<url>[^\"]+)\"\\)");
   private static final Set<String> ZIPPED = Set.of("css", "js", "svg", "txt", "json");
   private static final Map<String, Vendored> VENDORED =
       Map.of(
@@ -99,7 +104,16 @@ public final class Assets {
     if (!PLAIN.matcher(name).matches()) {
       return Optional.empty();
     }
-    return devRoot.isPresent() ? load(name) : known.computeIfAbsent(name, this::load);
+    if (devRoot.isPresent()) {
+      return load(name);
+    }
+    Optional<Asset> held = known.get(name);
+    if (held == null) {
+      // Loading a style sheet loads the files it names, so this cannot happen inside the map.
+      held = load(name);
+      known.put(name, held);
+    }
+    return held;
   }
 
   private Optional<Asset> load(String name) {
@@ -109,12 +123,47 @@ public final class Assets {
       }
       byte[] content = in.readAllBytes();
       String ending = name.substring(name.lastIndexOf('.') + 1);
+      if (ending.equals("css")) {
+        content = joined(name, content).getBytes(StandardCharsets.UTF_8);
+      }
       Optional<byte[]> zipped =
           ZIPPED.contains(ending) ? Optional.of(zip(content)) : Optional.empty();
       return Optional.of(new Asset(content, zipped, hash(content), mimeType(ending)));
     } catch (IOException e) {
       throw new UncheckedIOException("Cannot read static/" + name, e);
     }
+  }
+
+  /**
+   * A style sheet with those that it imports put in their place, so that a page needs one request
+   * for all of its style; the files it names get addresses that may be kept for ever.
+   */
+  private String joined(String name, byte[] content) throws IOException {
+    String text = new String(content, StandardCharsets.UTF_8);
+    StringBuilder whole = new StringBuilder();
+    Matcher named = NAMED_FILE.matcher(text);
+    while (named.find()) {
+      String file =
+          resolved(
+              name, named.group("import") == null ? named.group("url") : named.group("import"));
+      String put;
+      if (named.group("import") == null) {
+        put = "url(\"" + url(file) + "\")";
+      } else {
+        try (InputStream in = open(file)) {
+          if (in == null) {
+            throw new IOException(name + " imports " + file + ", which is not there");
+          }
+          put = joined(file, in.readAllBytes());
+        }
+      }
+      named.appendReplacement(whole, Matcher.quoteReplacement(put));
+    }
+    return named.appendTail(whole).toString();
+  }
+
+  private static String resolved(String from, String relative) {
+    return URI.create(from).resolve(relative).toString();
   }
 
   private InputStream open(String name) throws IOException {
@@ -161,9 +210,7 @@ public final class Assets {
 
   private static String hash(byte[] content) {
     String whole =
-        HexFormat.of()
-            .formatHex(
-                Tokens.sha256(new String(content, java.nio.charset.StandardCharsets.ISO_8859_1)));
+        HexFormat.of().formatHex(Tokens.sha256(new String(content, StandardCharsets.ISO_8859_1)));
     return whole.substring(0, 12);
   }
 

@@ -12,8 +12,20 @@ import java.util.List;
  * @param utc the zone's distance from UTC on that day, such as {@code UTC+1}
  */
 public record Lanes(LocalDate day, int fromHour, int hours, String utc, List<VenueLanes> venues) {
+  private static final long TO_THE_MINUTE = 360;
+  private static final long LONGEST = 600;
+
   public Lanes {
     venues = List.copyOf(venues);
+  }
+
+  /**
+   * Classes of {@code clock.css} that place something on an axis of time, such as {@code h9 m20
+   * for25}; what lasts longer than it has classes for is rounded up to those there are.
+   */
+  static String slot(LocalTime from, long minutes) {
+    long length = minutes <= TO_THE_MINUTE ? minutes : Math.min(LONGEST, (minutes + 4) / 5 * 5);
+    return "h" + from.getHour() + " m" + from.getMinute() + " for" + length;
   }
 
   /** The full hours of the axis, its end included. */
@@ -67,7 +79,7 @@ public record Lanes(LocalDate day, int fromHour, int hours, String utc, List<Ven
     }
 
     public String slot() {
-      return "h" + from.getHour() + " m" + from.getMinute() + " for" + minutes;
+      return Lanes.slot(from, minutes);
     }
   }
 }

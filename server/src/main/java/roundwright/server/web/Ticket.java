@@ -84,7 +84,7 @@ public record Ticket(
 
   /** The classes that place it on an axis of time. */
   public String slot() {
-    return "h" + start.getHour() + " m" + start.getMinute() + " for" + minutes();
+    return Lanes.slot(start.toLocalTime(), minutes());
   }
 
   /**

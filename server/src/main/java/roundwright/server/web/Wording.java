@@ -1,16 +1,19 @@
 package roundwright.server.web;
 
-import java.math.BigDecimal;
 import java.text.NumberFormat;
+import java.time.Duration;
 import java.time.LocalDate;
 import java.time.LocalTime;
 import java.time.ZonedDateTime;
 import java.time.format.DateTimeFormatter;
+import java.time.temporal.ChronoUnit;
 import java.time.temporal.TemporalAccessor;
 import java.util.Locale;
 
 /** Times, days and figures as templates write them: {@code ${wording.clock(...)}}. */
 public final class Wording {
+  private static final long MINUTES_SAID_AS_SUCH = 120;
+
   private final Messages messages;
   private final Locale locale;
 
@@ -55,7 +58,7 @@ public final class Wording {
   }
 
   /** Minutes and seconds of a stretch of time. */
-  public String stopwatch(BigDecimal seconds) {
+  public String stopwatch(Number seconds) {
     long whole = seconds.longValue();
     return String.format(Locale.ROOT, "%d:%02d", whole / 60, whole % 60);
   }
@@ -66,9 +69,51 @@ public final class Wording {
     return format.format(number);
   }
 
-  /** Classes that place something on an axis of time: {@code h9 m20 for25}. */
-  public String slot(LocalTime from, long minutes) {
-    return "h" + from.getHour() + " m" + from.getMinute() + " for" + minutes;
+  /** A full hour of an axis of time; the hours after midnight go on from 24. */
+  public String hour(int hour) {
+    return clock(LocalTime.of(hour % 24, 0));
+  }
+
+  /** The days from one to another, the year once. */
+  public String span(LocalDate first, LocalDate last) {
+    if (first.equals(last)) {
+      return date(first);
+    }
+    return messages.say(locale, spanKey(first, last), day(first), date(last));
+  }
+
+  /** The same without weekdays, and the month once where it is one. */
+  public String shortSpan(LocalDate first, LocalDate last) {
+    String year = " " + last.getYear();
+    if (first.equals(last)) {
+      return form("form.month").format(first) + year;
+    }
+    boolean sameMonth = first.getMonth() == last.getMonth() && first.getYear() == last.getYear();
+    String start = form(sameMonth ? "form.day-of-month" : "form.month").format(first);
+    return messages.say(
+        locale, spanKey(first, last), start, form("form.month").format(last) + year);
+  }
+
+  private static String spanKey(LocalDate first, LocalDate last) {
+    return first.plusDays(1).equals(last) ? "form.span.two" : "form.span";
+  }
+
+  /** How long it is from now to a moment, as precisely as helps: minutes, hours or days. */
+  public String ahead(ZonedDateTime now, ZonedDateTime moment) {
+    long minutes = Duration.between(now, moment).toMinutes();
+    if (minutes < 1) {
+      return messages.say(locale, "ahead.now");
+    }
+    if (minutes < MINUTES_SAID_AS_SUCH) {
+      return messages.say(locale, "ahead.minutes", minutes);
+    }
+    long days =
+        ChronoUnit.DAYS.between(
+            now.toLocalDate(), moment.withZoneSameInstant(now.getZone()).toLocalDate());
+    if (days < 1) {
+      return messages.say(locale, "ahead.hours", (minutes + 30) / 60);
+    }
+    return messages.say(locale, "ahead.days", days);
   }
 
   /** What is wrong with a field. */

@@ -1,0 +1,124 @@
+package roundwright.scheduling.rules;
+
+import java.util.EnumMap;
+import java.util.List;
+import java.util.Map;
+import roundwright.scheduling.core.Board;
+import roundwright.scheduling.core.Frame;
+import roundwright.scheduling.core.GroupRow;
+import roundwright.scheduling.core.PersonRow;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.cost.RuleName;
+
+/**
+ * All rules of one event. A price has two parts: what is <em>hard</em>, breaches times {@link
+ * #BREACH} plus gaps, and strain in millionths; the first is compared before the second. A strain
+ * rule of weight 0 is left out.
+ */
+public final class RuleBook {
+  /** More than any plan has gaps, so that one breach weighs more than all of them. */
+  public static final long BREACH = 1L << 32;
+
+  private final PersonRule[] personBreaches;
+  private final PersonRule[] personStrains;
+  private final GroupRule[] groupBreaches;
+  private final GroupRule groupGaps;
+  private final GroupRule[] groupStrains;
+  private final List<FrameRule> frameBreaches;
+  private final List<FrameRule> frameStrains;
+
+  public RuleBook(Problem problem) {
+    var rules = problem.event.rules();
+    personBreaches = PersonRules.breaches().toArray(PersonRule[]::new);
+    personStrains =
+        PersonRules.strains(problem).stream()
+            .filter(rule -> rules.weight(rule.name()).signum() > 0)
+            .toArray(PersonRule[]::new);
+    groupBreaches = GroupRules.breaches().toArray(GroupRule[]::new);
+    groupGaps = GroupRules.gaps();
+    groupStrains =
+        GroupRules.strains(problem).stream()
+            .filter(rule -> rules.weight(rule.name()).signum() > 0)
+            .toArray(GroupRule[]::new);
+    frameBreaches = FrameRules.breaches();
+    frameStrains = FrameRules.strains(problem);
+  }
+
+  long hard(PersonRow row) {
+    long breaches = 0;
+    for (PersonRule rule : personBreaches) {
+      breaches += rule.price(row);
+    }
+    return breaches * BREACH;
+  }
+
+  long strain(PersonRow row) {
+    long strain = 0;
+    for (PersonRule rule : personStrains) {
+      strain += rule.price(row);
+    }
+    return strain;
+  }
+
+  long hard(GroupRow row) {
+    long breaches = 0;
+    for (GroupRule rule : groupBreaches) {
+      breaches += rule.price(row);
+    }
+    return breaches * BREACH + groupGaps.price(row);
+  }
+
+  long strain(GroupRow row) {
+    long strain = 0;
+    for (GroupRule rule : groupStrains) {
+      strain += rule.price(row);
+    }
+    return strain;
+  }
+
+  public long hard(Frame frame) {
+    long breaches = 0;
+    for (FrameRule rule : frameBreaches) {
+      breaches += rule.price(frame);
+    }
+    return breaches * BREACH;
+  }
+
+  public long strain(Frame frame) {
+    long strain = 0;
+    for (FrameRule rule : frameStrains) {
+      strain += rule.price(frame);
+    }
+    return strain;
+  }
+
+  /** The price by rule: breaches and gaps as they are, strain in weighted millionths. */
+  public Map<RuleName, Long> explain(Board board) {
+    Map<RuleName, Long> found = new EnumMap<>(RuleName.class);
+    PersonRow person = new PersonRow();
+    for (int p = 0; p < board.problem.people; p++) {
+      person.load(board, p);
+      for (PersonRule rule : personBreaches) {
+        found.merge(rule.name(), rule.price(person), Long::sum);
+      }
+      for (PersonRule rule : personStrains) {
+        found.merge(rule.name(), rule.price(person), Long::sum);
+      }
+    }
+    GroupRow group = new GroupRow();
+    for (int g = 0; g < board.frame.groups; g++) {
+      group.load(board, g);
+      for (GroupRule rule : groupBreaches) {
+        found.merge(rule.name(), rule.price(group), Long::sum);
+      }
+      found.merge(groupGaps.name(), groupGaps.price(group), Long::sum);
+      for (GroupRule rule : groupStrains) {
+        found.merge(rule.name(), rule.price(group), Long::sum);
+      }
+    }
+    frameBreaches.forEach(rule -> found.merge(rule.name(), rule.price(board.frame), Long::sum));
+    frameStrains.forEach(rule -> found.merge(rule.name(), rule.price(board.frame), Long::sum));
+    found.values().removeIf(amount -> amount == 0);
+    return found;
+  }
+}

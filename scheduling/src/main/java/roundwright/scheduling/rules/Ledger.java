@@ -20,6 +20,9 @@ public final class Ledger {
   private static final int SEAT = 0;
   private static final int DUTY = 1;
 
+  /** What a trial adds for each breach: more than any strain, little enough to be summed. */
+  public static final long BREACH_IN_TRIALS = 1L << 44;
+
   public final Board board;
   public final Frame frame;
   public final Problem problem;
@@ -270,21 +273,19 @@ public final class Ledger {
   }
 
   /**
-   * What one commitment more would change in a person's own price, the group's left aside; beyond
-   * any strain where it would add a breach.
+   * A person's own price as the board now stands, open moves included: strain, and {@link
+   * #BREACH_IN_TRIALS} for each breach.
    */
-  public long trial(int person, int commitment) {
-    board.add(person, commitment);
+  public long priceNow(int person) {
     personRow.load(board, person);
-    long hardThen = book.hard(personRow);
-    long strainThen = book.strain(personRow);
-    board.drop(person, commitment);
-    long change = strainThen - personStrain[person];
-    return hardThen > personHard[person]
-        ? change + (hardThen - personHard[person]) / RuleBook.BREACH * BREACH_IN_TRIALS
-        : change;
+    return book.hard(personRow) / RuleBook.BREACH * BREACH_IN_TRIALS + book.strain(personRow);
   }
 
-  /** What a trial adds for each breach: more than any strain, little enough to be summed. */
-  public static final long BREACH_IN_TRIALS = 1L << 44;
+  /** Like {@link #priceNow}, with one commitment more. */
+  public long priceWith(int person, int commitment) {
+    board.add(person, commitment);
+    long price = priceNow(person);
+    board.drop(person, commitment);
+    return price;
+  }
 }

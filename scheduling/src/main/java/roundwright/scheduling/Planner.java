@@ -1,0 +1,205 @@
+package roundwright.scheduling;
+
+import java.math.BigDecimal;
+import java.util.ArrayList;
+import java.util.Collections;
+import java.util.EnumMap;
+import java.util.List;
+import java.util.Map;
+import java.util.concurrent.ExecutionException;
+import java.util.concurrent.ExecutorService;
+import java.util.concurrent.Executors;
+import java.util.concurrent.Future;
+import roundwright.scheduling.audit.Auditor;
+import roundwright.scheduling.audit.Verdict;
+import roundwright.scheduling.core.Board;
+import roundwright.scheduling.core.Dice;
+import roundwright.scheduling.core.Frame;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.core.Slot;
+import roundwright.scheduling.cost.Cost;
+import roundwright.scheduling.cost.Level;
+import roundwright.scheduling.cost.RuleName;
+import roundwright.scheduling.crewing.Arrangement;
+import roundwright.scheduling.crewing.Crewing;
+import roundwright.scheduling.model.Event;
+import roundwright.scheduling.model.Plan;
+import roundwright.scheduling.rules.RuleBook;
+import roundwright.scheduling.timetable.Timetabling;
+
+/**
+ * From an event to a plan: a few day plans, each tried with a first arrangement of groups and crews,
+ * the best of them annealed for the rest of the budget. Every plan that leaves has been priced by
+ * the auditor. One call at a time for each instance.
+ */
+public final class Planner {
+  private static final int MOST_DAY_PLANS = 6;
+  private static final double DAY_PLAN_PART = 0.06;
+  private static final double DAY_PLANS_UNTIL = 0.35;
+  private static final double POLISH_AT = 0.97;
+  private static final int MOVES_PER_LAYOUT = 20;
+  private static final double FIRST_PRESSURE = 0.1;
+  private static final double MORE_PRESSURE = 0.08;
+  private static final double LESS_PRESSURE = 0.05;
+  private static final double MOST_PRESSURE = 0.6;
+  private static final double LIKELY_MOVES_A_SECOND = 400_000;
+
+  private final Event event;
+  private final Problem problem;
+  private final RuleBook book;
+  private final Spending spending;
+  private final Effort effort;
+  private final Progress progress;
+
+  private Planner(Event event, Effort effort, Progress progress) {
+    this.event = event;
+    this.problem = new Problem(event);
+    this.book = new RuleBook(problem);
+    this.effort = effort;
+    this.progress = progress;
+    this.spending = new Spending(effort, progress);
+  }
+
+  /**
+   * The best plan that the effort finds, priced and explained by the auditor. It may have breaches
+   * and gaps: whoever asked decides what to do about them.
+   */
+  public static Plan plan(Event event, Effort effort, Progress progress) {
+    return new Planner(event, effort, progress).plan();
+  }
+
+  private Plan plan() {
+    Arrangement best = anneal(bestDayPlan());
+    spending.report(Progress.Stage.DONE, best.hard, best.strain, List.of());
+    return signed(Written.plan(best));
+  }
+
+  private Plan signed(Plan plan) {
+    Verdict verdict = new Auditor(event).audit(plan);
+    return new Plan(
+        plan.groups(), java.util.Optional.of(verdict.cost()), verdict.findings());
+  }
+
+  private Arrangement bestDayPlan() {
+    Timetabling timetabling = new Timetabling(problem);
+    Arrangement best = null;
+    double pressure = FIRST_PRESSURE;
+    for (int attempt = 0; attempt < MOST_DAY_PLANS; attempt++) {
+      if (best != null && spending.used() > DAY_PLANS_UNTIL) {
+        break;
+      }
+      Dice dice = new Dice(effort.seed() * 1_000_003 + attempt);
+      Crewing crewing = new Crewing(layOut(timetabling, pressure, dice), book, dice);
+      crewing.firstPlan(best == null ? spending::overdue : spending::over);
+      crewing.polish(spending::over);
+      Arrangement found = crewing.arrangement();
+      pressure =
+          found.hard > 0
+              ? Math.min(MOST_PRESSURE, pressure + MORE_PRESSURE)
+              : Math.max(0, pressure - LESS_PRESSURE);
+      if (best == null || found.compareTo(best) < 0) {
+        best = found;
+      }
+      spending.report(Progress.Stage.FIRST_PLAN, best.hard, best.strain, stillWrong(best));
+    }
+    return best;
+  }
+
+  private Frame layOut(Timetabling timetabling, double pressure, Dice dice) {
+    double usedBefore = spending.used();
+    long most =
+        effort.steps().isPresent()
+            ? Math.max(50, effort.steps().getAsLong() / MOVES_PER_LAYOUT / MOST_DAY_PLANS)
+            : Long.MAX_VALUE;
+    List<Slot> slots =
+        timetabling.search(
+            pressure,
+            dice,
+            layouts -> {
+              double bySteps = (double) layouts / most;
+              double byTime = (spending.usedTime() - usedBefore) / DAY_PLAN_PART;
+              return spending.over() ? 1 : Math.max(bySteps, byTime);
+            });
+    return new Frame(problem, slots);
+  }
+
+  private List<String> stillWrong(Arrangement arrangement) {
+    if (arrangement.hard == 0) {
+      return List.of();
+    }
+    Board board = arrangement.board();
+    Map<RuleName, Long> wrong = new EnumMap<>(RuleName.class);
+    wrong.putAll(book.explain(board));
+    wrong.keySet().removeIf(rule -> rule.level() == Level.STRAIN);
+    return wrong.keySet().stream().map(RuleName::word).toList();
+  }
+
+  private Arrangement anneal(Arrangement from) {
+    List<Arrangement> found = new ArrayList<>();
+    if (effort.threads() == 1) {
+      found.add(annealOne(from, 0));
+    } else {
+      found.addAll(annealSeveral(from));
+    }
+    return Collections.min(found);
+  }
+
+  private List<Arrangement> annealSeveral(Arrangement from) {
+    ExecutorService pool = Executors.newFixedThreadPool(effort.threads());
+    try {
+      List<Future<Arrangement>> running = new ArrayList<>();
+      for (int thread = 0; thread < effort.threads(); thread++) {
+        int number = thread;
+        running.add(pool.submit(() -> annealOne(from, number)));
+      }
+      List<Arrangement> found = new ArrayList<>();
+      for (Future<Arrangement> one : running) {
+        found.add(one.get());
+      }
+      return found;
+    } catch (InterruptedException interrupted) {
+      Thread.currentThread().interrupt();
+      return List.of(from);
+    } catch (ExecutionException failed) {
+      throw new IllegalStateException("A search ended badly", failed.getCause());
+    } finally {
+      pool.shutdownNow();
+    }
+  }
+
+  private Arrangement annealOne(Arrangement from, int thread) {
+    Crewing crewing =
+        Crewing.from(from, book, new Dice(effort.seed() * 1_000_003 + MOST_DAY_PLANS + thread));
+    double usedBefore = spending.usedTime();
+    long most = effort.steps().orElse(Long.MAX_VALUE);
+    Crewing.Budget budget =
+        new Crewing.Budget() {
+          @Override
+          public double used(long moves) {
+            double byTime = (spending.usedTime() - usedBefore) / (POLISH_AT - usedBefore);
+            return spending.over() ? 1 : Math.max((double) moves / most, byTime);
+          }
+
+          @Override
+          public double likelyMoves() {
+            return effort.steps().isPresent()
+                ? (double) most
+                : LIKELY_MOVES_A_SECOND * effort.seconds().getAsDouble();
+          }
+        };
+    List<String> wrong = stillWrong(from);
+    long tried =
+        crewing.anneal(
+            budget,
+            (hard, strain, moves) ->
+                spending.reportNowAndThen(thread, moves, hard, strain, hard == 0 ? List.of() : wrong));
+    spending.spent(tried);
+    crewing.polish(spending::over);
+    return Collections.min(List.of(from, crewing.arrangement()));
+  }
+
+  static Cost cost(long hard, long strain) {
+    return new Cost(
+        hard / RuleBook.BREACH, hard % RuleBook.BREACH, BigDecimal.valueOf(strain, 6));
+  }
+}

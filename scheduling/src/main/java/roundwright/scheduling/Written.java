@@ -1,0 +1,91 @@
+package roundwright.scheduling;
+
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.HashSet;
+import java.util.List;
+import java.util.Optional;
+import java.util.Set;
+import roundwright.scheduling.core.Frame;
+import roundwright.scheduling.core.LocalClock;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.crewing.Arrangement;
+import roundwright.scheduling.model.Group;
+import roundwright.scheduling.model.Plan;
+
+/** An arrangement as the plan that files and people know. */
+final class Written {
+  private static final int ID_LETTERS = 5;
+  private static final String LETTERS = "0123456789abcdefghjkmnpqrstvwxyz";
+
+  private Written() {}
+
+  static Plan plan(Arrangement arrangement) {
+    Frame frame = arrangement.frame;
+    Problem problem = frame.problem;
+    List<List<String>> competitors = lists(frame.groups);
+    for (int seat = 0; seat < problem.seats; seat++) {
+      int group = arrangement.groupOf(seat);
+      if (group >= 0) {
+        competitors.get(group).add(problem.personList.get(problem.seatPerson[seat]).id());
+      }
+    }
+    List<List<String>> crews = lists(frame.groups * 3);
+    for (int place = 0; place < frame.places; place++) {
+      int person = arrangement.personAt(place);
+      if (person >= 0) {
+        crews
+            .get(frame.placeGroup[place] * 3 + frame.placeRole[place])
+            .add(problem.personList.get(person).id());
+      }
+    }
+    crews.forEach(crew -> crew.sort(Comparator.naturalOrder()));
+    List<Group> groups = new ArrayList<>();
+    Set<String> used = new HashSet<>();
+    for (int g = 0; g < frame.groups; g++) {
+      String round = problem.roundList.get(frame.round[g]).id();
+      if (competitors.get(g).isEmpty()) {
+        continue;
+      }
+      groups.add(
+          new Group(
+              id(round, frame.number[g], used),
+              round,
+              frame.number[g],
+              problem.hallList.get(frame.hall[g]).id(),
+              frame.stations[g],
+              LocalClock.instant(frame.start[g]),
+              LocalClock.instant(frame.end[g]),
+              competitors.get(g),
+              new Group.Crew(crews.get(g * 3), crews.get(g * 3 + 1), crews.get(g * 3 + 2))));
+    }
+    return new Plan(groups, Optional.empty(), List.of());
+  }
+
+  private static List<List<String>> lists(int count) {
+    List<List<String>> lists = new ArrayList<>();
+    for (int i = 0; i < count; i++) {
+      lists.add(new ArrayList<>());
+    }
+    return lists;
+  }
+
+  /** An id that says nothing and is the same whenever the same group is planned first. */
+  private static String id(String round, int number, Set<String> used) {
+    long hash = 1125899906842597L;
+    for (char c : (round + "/" + number).toCharArray()) {
+      hash = 31 * hash + c;
+    }
+    String id;
+    do {
+      long rest = hash * 0x9E3779B97F4A7C15L;
+      StringBuilder letters = new StringBuilder("g-");
+      for (int i = 0; i < ID_LETTERS; i++) {
+        letters.append(LETTERS.charAt((int) (rest >>> (59 - 5 * i)) & 31));
+      }
+      id = letters.toString();
+      hash++;
+    } while (!used.add(id));
+    return id;
+  }
+}

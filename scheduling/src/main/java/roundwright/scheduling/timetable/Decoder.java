@@ -1,0 +1,288 @@
+package roundwright.scheduling.timetable;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.List;
+import roundwright.scheduling.core.LocalClock;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.core.Slot;
+import roundwright.scheduling.model.Pins;
+
+/**
+ * Lays rounds out one after the other: each group at the earliest start at which its hall is free
+ * and open, the round before is over and the people for its crew are there (serial schedule
+ * generation, Kelley 1963). Pinned groups stand first. What fits nowhere is laid down all the same
+ * and pays for it in the price. Not thread-safe; allocates little.
+ */
+final class Decoder {
+  private static final int NOT_FOUND = Integer.MAX_VALUE;
+  private static final int LIMIT_PARTS = 1024;
+
+  final Problem problem;
+  final Supply supply;
+
+  private final int setup;
+  private final int turnaround;
+  private final int[] dayStart;
+
+  private final int[][] takenFrom;
+  private final int[][] takenTo;
+  private final int[] takenCount;
+  private final int[][] kept;
+  private int limit = LIMIT_PARTS;
+
+  /** Of each round: starts of its groups by place; the rest is the shape's. */
+  final int[][] start;
+
+  final Shape[] shape;
+  final int[] firstStart;
+  final int[] lastEnd;
+  private final boolean[] placed;
+  private final int[][] pinStart;
+  long shortage;
+
+  Decoder(Problem problem, Supply supply) {
+    this.problem = problem;
+    this.supply = supply;
+    setup = problem.event.rules().setupMinutes();
+    turnaround = problem.event.rules().turnaroundMinutes();
+    dayStart = dayStarts(problem);
+    takenFrom = new int[problem.halls][16];
+    takenTo = new int[problem.halls][16];
+    takenCount = new int[problem.halls];
+    kept = new int[supply.pools][supply.stretches];
+    start = new int[problem.rounds][];
+    shape = new Shape[problem.rounds];
+    firstStart = new int[problem.rounds];
+    lastEnd = new int[problem.rounds];
+    placed = new boolean[problem.rounds];
+    pinStart = new int[problem.rounds][];
+    for (int r = 0; r < problem.rounds; r++) {
+      pinStart[r] = new int[0];
+    }
+    for (Pins.GroupPin pin : problem.pins().groups()) {
+      if (pin.start().isPresent()) {
+        int r = problem.round(pin.round());
+        int known = pinStart[r].length;
+        if (known < pin.number()) {
+          pinStart[r] = Arrays.copyOf(pinStart[r], pin.number());
+          Arrays.fill(pinStart[r], known, pin.number(), NOT_FOUND);
+        }
+        pinStart[r][pin.number() - 1] = LocalClock.epochMinute(pin.start().get());
+      }
+    }
+  }
+
+  private static int[] dayStarts(Problem problem) {
+    return java.util.stream.IntStream.range(0, problem.halls)
+        .flatMap(
+            h ->
+                Arrays.stream(problem.hallFreeFrom[h])
+                    .map(from -> problem.hallClock[h].minuteAt(problem.hallClock[h].date(from), 0)))
+        .sorted()
+        .distinct()
+        .toArray();
+  }
+
+  int days() {
+    return Math.max(1, dayStart.length);
+  }
+
+  /**
+   * Lays out all rounds.
+   *
+   * @param order rounds by priority
+   * @param shapes by round; null for a round without entrants
+   * @param day by round: not before that day
+   * @param pressure part of the people there to leave out of account, 0 to 1
+   */
+  void decode(int[] order, Shape[] shapes, int[] day, double pressure) {
+    Arrays.fill(takenCount, 0);
+    for (int[] pool : kept) {
+      Arrays.fill(pool, 0);
+    }
+    Arrays.fill(placed, false);
+    shortage = 0;
+    limit = (int) Math.round((1 - pressure) * LIMIT_PARTS);
+    for (int r = 0; r < problem.rounds; r++) {
+      shape[r] = shapes[r];
+      if (shapes[r] != null && (start[r] == null || start[r].length != shapes[r].groups)) {
+        start[r] = new int[shapes[r].groups];
+      }
+      if (shapes[r] != null) {
+        placePinned(r);
+      }
+    }
+    for (int r : order) {
+      place(r, day);
+    }
+  }
+
+  private void placePinned(int r) {
+    for (int i = 0; i < Math.min(pinStart[r].length, shape[r].groups); i++) {
+      if (pinStart[r][i] != NOT_FOUND) {
+        start[r][i] = pinStart[r][i];
+        take(shape[r], i, start[r][i]);
+      }
+    }
+  }
+
+  private boolean pinned(int r, int i) {
+    return i < pinStart[r].length && pinStart[r][i] != NOT_FOUND;
+  }
+
+  private void place(int r, int[] day) {
+    if (placed[r] || shape[r] == null) {
+      return;
+    }
+    int ready = Math.max(problem.notBefore[r], dayStart[Math.min(day[r], dayStart.length - 1)]);
+    int before = problem.roundBefore[r];
+    if (before >= 0 && shape[before] != null) {
+      place(before, day);
+      ready = Math.max(ready, lastEnd[before] + turnaround);
+    }
+    Shape own = shape[r];
+    firstStart[r] = NOT_FOUND;
+    lastEnd[r] = Problem.NEVER;
+    int earliest = ready;
+    int lastHall = -1;
+    for (int i = 0; i < own.groups; i++) {
+      if (!pinned(r, i)) {
+        int from = own.hall[i] > lastHall || lastHall < 0 ? earliest : earliest + 1;
+        start[r][i] = findStart(own, i, from);
+        take(own, i, start[r][i]);
+      }
+      if (start[r][i] >= earliest) {
+        earliest = start[r][i];
+        lastHall = own.hall[i];
+      }
+      firstStart[r] = Math.min(firstStart[r], start[r][i]);
+      lastEnd[r] = Math.max(lastEnd[r], start[r][i] + own.minutes[i]);
+    }
+    placed[r] = true;
+  }
+
+  private int findStart(Shape own, int group, int from) {
+    int found = search(own, group, from, true);
+    if (found == NOT_FOUND) {
+      found = search(own, group, from, false);
+    }
+    return found == NOT_FOUND ? afterEverything(own, group, from) : found;
+  }
+
+  private int search(Shape own, int group, int from, boolean withSupply) {
+    int hall = own.hall[group];
+    int minutes = own.minutes[group];
+    int[] freeFrom = problem.hallFreeFrom[hall];
+    int[] freeTo = problem.hallFreeTo[hall];
+    int[] keeps = own.kept[group];
+    for (int w = 0; w < freeFrom.length; w++) {
+      int at = onGrid(hall, Math.max(from, freeFrom[w]));
+      while (at + minutes <= freeTo[w]) {
+        int later = afterClash(hall, at, minutes);
+        if (later > at) {
+          at = onGrid(hall, later);
+        } else if (withSupply && !suffices(keeps, at, at + minutes)) {
+          at = onGrid(hall, at + 1);
+        } else {
+          return at;
+        }
+      }
+    }
+    return NOT_FOUND;
+  }
+
+  /** The soonest minute at which no group in the way is left, or the same where none is. */
+  private int afterClash(int hall, int at, int minutes) {
+    for (int i = 0; i < takenCount[hall]; i++) {
+      if (takenFrom[hall][i] < at + minutes + setup && at < takenTo[hall][i] + setup) {
+        return takenTo[hall][i] + setup;
+      }
+    }
+    return at;
+  }
+
+  private boolean suffices(int[] keeps, int from, int to) {
+    int last = supply.stretch(to - 1);
+    for (int pool = 0; pool < supply.pools; pool++) {
+      int keep = keeps[pool];
+      if (keep == 0) {
+        continue;
+      }
+      for (int s = supply.stretch(from); s <= last; s++) {
+        if ((kept[pool][s] + keep) * (long) LIMIT_PARTS > (long) supply.there[pool][s] * limit) {
+          return false;
+        }
+      }
+    }
+    return true;
+  }
+
+  private int afterEverything(Shape own, int group, int from) {
+    int hall = own.hall[group];
+    int[] freeTo = problem.hallFreeTo[hall];
+    int at = Math.max(from, freeTo.length == 0 ? from : freeTo[freeTo.length - 1]);
+    for (int i = 0; i < takenCount[hall]; i++) {
+      at = Math.max(at, takenTo[hall][i] + setup);
+    }
+    return onGrid(hall, at);
+  }
+
+  private int onGrid(int hall, int minute) {
+    LocalClock clock = problem.hallClock[hall];
+    int off = clock.minuteOfDay(minute) % problem.grid();
+    if (off == 0) {
+      return minute;
+    }
+    int next = minute + problem.grid() - off;
+    // Every day begins on the grid, also where the grid does not divide a day.
+    return clock.date(next) == clock.date(minute)
+        ? onGrid(hall, next)
+        : next - clock.minuteOfDay(next);
+  }
+
+  private void take(Shape own, int group, int at) {
+    int hall = own.hall[group];
+    int end = at + own.minutes[group];
+    if (takenCount[hall] == takenFrom[hall].length) {
+      takenFrom[hall] = Arrays.copyOf(takenFrom[hall], takenCount[hall] * 2);
+      takenTo[hall] = Arrays.copyOf(takenTo[hall], takenCount[hall] * 2);
+    }
+    int i = takenCount[hall]++;
+    while (i > 0 && takenFrom[hall][i - 1] > at) {
+      takenFrom[hall][i] = takenFrom[hall][i - 1];
+      takenTo[hall][i] = takenTo[hall][i - 1];
+      i--;
+    }
+    takenFrom[hall][i] = at;
+    takenTo[hall][i] = end;
+    int[] keeps = own.kept[group];
+    int last = supply.stretch(end - 1);
+    for (int pool = 0; pool < supply.pools; pool++) {
+      for (int s = supply.stretch(at); s <= last; s++) {
+        kept[pool][s] += keeps[pool];
+        shortage += Math.max(0, Math.min(keeps[pool], kept[pool][s] - supply.there[pool][s]));
+      }
+    }
+  }
+
+  /** The layout as slots, rounds in order and groups numbered by place. */
+  List<Slot> slots() {
+    List<Slot> slots = new ArrayList<>();
+    for (int r = 0; r < problem.rounds; r++) {
+      if (shape[r] != null) {
+        for (int i = 0; i < shape[r].groups; i++) {
+          slots.add(
+              new Slot(
+                  r,
+                  i + 1,
+                  shape[r].hall[i],
+                  shape[r].stations[i],
+                  start[r][i],
+                  start[r][i] + shape[r].minutes[i]));
+        }
+      }
+    }
+    return slots;
+  }
+}

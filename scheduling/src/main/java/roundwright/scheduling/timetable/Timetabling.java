@@ -1,0 +1,154 @@
+package roundwright.scheduling.timetable;
+
+import java.util.ArrayList;
+import java.util.Comparator;
+import java.util.List;
+import java.util.stream.IntStream;
+import roundwright.scheduling.core.Dice;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.core.Slot;
+
+/**
+ * Rounds to groups, halls and starts: simulated annealing (Kirkpatrick, Gelatt and Vecchi 1983)
+ * over what the serial decoder is told: the order of priority, each round's shape and the day it
+ * may begin on. Not thread-safe.
+ */
+public final class Timetabling {
+  private static final double WARM = 300;
+  private static final double COOL = 1;
+  private static final int LOOKS_BETWEEN = 16;
+
+  private final Decoder decoder;
+  private final Outlook outlook;
+  private final List<List<Shape>> shapes = new ArrayList<>();
+  private final int[] rounds;
+  private final int[] firstOrder;
+  private final Shape[] shape;
+  private final int[] day;
+
+  private Dice dice;
+  private double pressure;
+  private int[] order;
+
+  public Timetabling(Problem problem) {
+    Supply supply = new Supply(problem);
+    decoder = new Decoder(problem, supply);
+    outlook = new Outlook(problem, decoder, supply);
+    for (int r = 0; r < problem.rounds; r++) {
+      shapes.add(Shape.ofRound(problem, supply, r));
+    }
+    rounds = IntStream.range(0, problem.rounds).filter(r -> !shapes.get(r).isEmpty()).toArray();
+    shape = new Shape[problem.rounds];
+    day = new int[problem.rounds];
+    firstOrder =
+        IntStream.of(rounds)
+            .boxed()
+            .sorted(
+                Comparator.comparingInt((Integer r) -> problem.roundList.get(r).number())
+                    .thenComparing(r -> -problem.entrants(r))
+                    .thenComparing(r -> r))
+            .mapToInt(Integer::intValue)
+            .toArray();
+  }
+
+  /** How far a budget is used: 0 at the start, 1 or more once it is spent. */
+  @FunctionalInterface
+  public interface Budget {
+    double used(long layouts);
+  }
+
+  /**
+   * The best layout found within the budget, as slots; empty where no round has entrants.
+   *
+   * @param partKeptBack part of the people there that no crew may count on, 0 to 1: more of it
+   *     spreads the groups further apart
+   */
+  public List<Slot> search(double partKeptBack, Dice chance, Budget budget) {
+    pressure = partKeptBack;
+    dice = chance;
+    order = firstOrder.clone();
+    for (int r : rounds) {
+      shape[r] = shapes.get(r).get(0);
+      day[r] = 0;
+    }
+    double price = lay();
+    List<Slot> best = decoder.slots();
+    double bestPrice = price;
+    long tried = 0;
+    double temperature = WARM;
+    while (rounds.length > 0) {
+      if (tried % LOOKS_BETWEEN == 0) {
+        double used = budget.used(tried);
+        if (used >= 1) {
+          break;
+        }
+        temperature = WARM * StrictMath.pow(COOL / WARM, used);
+      }
+      tried++;
+      Change change = change();
+      double then = lay();
+      double drawn = (dice.below(1 << 20) + 0.5) / (1 << 20);
+      if (then - price <= -temperature * StrictMath.log(drawn)) {
+        price = then;
+        if (then < bestPrice) {
+          bestPrice = then;
+          best = decoder.slots();
+        }
+      } else {
+        change.undo();
+      }
+    }
+    return best;
+  }
+
+  private double lay() {
+    decoder.decode(order, shape, day, pressure);
+    return outlook.price();
+  }
+
+  private interface Change {
+    void undo();
+  }
+
+  private Change change() {
+    int r = rounds[dice.below(rounds.length)];
+    int kind = dice.below(10);
+    if (kind < 3 && shapes.get(r).size() > 1) {
+      return otherShape(r);
+    }
+    if (kind < 5 && decoder.days() > 1) {
+      return otherDay(r);
+    }
+    return otherOrder(kind);
+  }
+
+  private Change otherShape(int r) {
+    Shape before = shape[r];
+    shape[r] = shapes.get(r).get(dice.below(shapes.get(r).size()));
+    return () -> shape[r] = before;
+  }
+
+  private Change otherDay(int r) {
+    int before = day[r];
+    day[r] = dice.below(decoder.days());
+    return () -> day[r] = before;
+  }
+
+  private Change otherOrder(int kind) {
+    int[] before = order.clone();
+    int from = dice.below(order.length);
+    int to = dice.below(order.length);
+    int moved = order[from];
+    if (kind % 2 == 0) {
+      order[from] = order[to];
+      order[to] = moved;
+    } else if (from < to) {
+      System.arraycopy(order, from + 1, order, from, to - from);
+      order[to] = moved;
+    } else {
+      System.arraycopy(order, to, order, to + 1, from - to);
+      order[to] = moved;
+    }
+    return () -> order = before;
+  }
+}

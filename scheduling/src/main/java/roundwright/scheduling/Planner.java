@@ -28,16 +28,18 @@ import roundwright.scheduling.rules.RuleBook;
 import roundwright.scheduling.timetable.Timetabling;
 
 /**
- * From an event to a plan: a few day plans, each tried with a first arrangement of groups and crews,
- * the best of them annealed for the rest of the budget. Every plan that leaves has been priced by
- * the auditor. One call at a time for each instance.
+ * From an event to a plan: a few day plans, each tried with a first arrangement of groups and
+ * crews, the best of them annealed for the rest of the budget. Every plan that leaves has been
+ * priced by the auditor. One call at a time for each instance.
  */
 public final class Planner {
-  private static final int MOST_DAY_PLANS = 6;
-  private static final double DAY_PLAN_PART = 0.06;
-  private static final double DAY_PLANS_UNTIL = 0.35;
+  private static final int MOST_DAY_PLANS = 16;
+  private static final double FIRST_DAY_PLAN_PART = 0.15;
+  private static final double DAY_PLAN_PART = 0.03;
+  private static final double DAY_PLANS_UNTIL = 0.3;
+  private static final double DAY_PLANS_UNTIL_IF_BROKEN = 0.6;
   private static final double POLISH_AT = 0.97;
-  private static final int MOVES_PER_LAYOUT = 20;
+  private static final double MOVES_PER_LAYOUT = 8.0;
   private static final double FIRST_PRESSURE = 0.1;
   private static final double MORE_PRESSURE = 0.08;
   private static final double LESS_PRESSURE = 0.05;
@@ -76,8 +78,7 @@ public final class Planner {
 
   private Plan signed(Plan plan) {
     Verdict verdict = new Auditor(event).audit(plan);
-    return new Plan(
-        plan.groups(), java.util.Optional.of(verdict.cost()), verdict.findings());
+    return new Plan(plan.groups(), java.util.Optional.of(verdict.cost()), verdict.findings());
   }
 
   private Arrangement bestDayPlan() {
@@ -85,18 +86,21 @@ public final class Planner {
     Arrangement best = null;
     double pressure = FIRST_PRESSURE;
     for (int attempt = 0; attempt < MOST_DAY_PLANS; attempt++) {
-      if (best != null && spending.used() > DAY_PLANS_UNTIL) {
+      if (best != null && enoughDayPlans(best)) {
         break;
       }
       Dice dice = new Dice(effort.seed() * 1_000_003 + attempt);
-      Crewing crewing = new Crewing(layOut(timetabling, pressure, dice), book, dice);
+      double part = attempt == 0 ? FIRST_DAY_PLAN_PART : DAY_PLAN_PART;
+      Crewing crewing = new Crewing(layOut(timetabling, pressure, part, dice), book, dice);
       crewing.firstPlan(best == null ? spending::overdue : spending::over);
       crewing.polish(spending::over);
       Arrangement found = crewing.arrangement();
-      pressure =
-          found.hard > 0
-              ? Math.min(MOST_PRESSURE, pressure + MORE_PRESSURE)
-              : Math.max(0, pressure - LESS_PRESSURE);
+      if (found.hard > 0) {
+        boolean gaps = Lessons.learn(found.board(), timetabling);
+        pressure = gaps ? Math.min(MOST_PRESSURE, pressure + MORE_PRESSURE) : pressure;
+      } else {
+        pressure = Math.max(0, pressure - LESS_PRESSURE);
+      }
       if (best == null || found.compareTo(best) < 0) {
         best = found;
       }
@@ -105,11 +109,15 @@ public final class Planner {
     return best;
   }
 
-  private Frame layOut(Timetabling timetabling, double pressure, Dice dice) {
+  private boolean enoughDayPlans(Arrangement best) {
+    return spending.used() > (best.hard == 0 ? DAY_PLANS_UNTIL : DAY_PLANS_UNTIL_IF_BROKEN);
+  }
+
+  private Frame layOut(Timetabling timetabling, double pressure, double part, Dice dice) {
     double usedBefore = spending.used();
     long most =
         effort.steps().isPresent()
-            ? Math.max(50, effort.steps().getAsLong() / MOVES_PER_LAYOUT / MOST_DAY_PLANS)
+            ? Math.max(50, Math.round(effort.steps().getAsLong() / MOVES_PER_LAYOUT * part))
             : Long.MAX_VALUE;
     List<Slot> slots =
         timetabling.search(
@@ -117,7 +125,7 @@ public final class Planner {
             dice,
             layouts -> {
               double bySteps = (double) layouts / most;
-              double byTime = (spending.usedTime() - usedBefore) / DAY_PLAN_PART;
+              double byTime = (spending.usedTime() - usedBefore) / part;
               return spending.over() ? 1 : Math.max(bySteps, byTime);
             });
     return new Frame(problem, slots);
@@ -192,14 +200,14 @@ public final class Planner {
         crewing.anneal(
             budget,
             (hard, strain, moves) ->
-                spending.reportNowAndThen(thread, moves, hard, strain, hard == 0 ? List.of() : wrong));
+                spending.reportNowAndThen(
+                    thread, moves, hard, strain, hard == 0 ? List.of() : wrong));
     spending.spent(tried);
     crewing.polish(spending::over);
     return Collections.min(List.of(from, crewing.arrangement()));
   }
 
   static Cost cost(long hard, long strain) {
-    return new Cost(
-        hard / RuleBook.BREACH, hard % RuleBook.BREACH, BigDecimal.valueOf(strain, 6));
+    return new Cost(hard / RuleBook.BREACH, hard % RuleBook.BREACH, BigDecimal.valueOf(strain, 6));
   }
 }

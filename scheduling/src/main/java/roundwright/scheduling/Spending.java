@@ -41,8 +41,7 @@ final class Spending {
 
   /** Past even what a first plan may take beyond the seconds given. */
   boolean overdue() {
-    return effort.seconds().isPresent()
-        && elapsedSeconds() >= effort.seconds().getAsDouble() + 2;
+    return effort.seconds().isPresent() && elapsedSeconds() >= effort.seconds().getAsDouble() + 2;
   }
 
   synchronized void spent(long moves) {

@@ -87,6 +87,11 @@ public final class Pace {
     return path;
   }
 
+  /** Least minutes of a group that holds one competitor and has scramblers and runners. */
+  public int aloneMinutes(int round, int seat) {
+    return leastMinutes(round, 0, 0, pathMicros(round, seat, 1, 1), 1, 0, 0);
+  }
+
   /**
    * Least minutes of a group, a multiple of the start grid.
    *

@@ -35,6 +35,8 @@ public final class Crewing {
   private final Problem problem;
   private final ExactParts parts;
   private final Dice dice;
+  private final Refill refill;
+  private final Untangling untangling;
 
   public Crewing(Frame frame, RuleBook book, Dice dice) {
     this(new Board(frame), book, dice);
@@ -46,6 +48,8 @@ public final class Crewing {
     this.ledger = new Ledger(board, book);
     this.parts = new ExactParts(ledger);
     this.dice = dice;
+    this.refill = new Refill(ledger, dice);
+    this.untangling = new Untangling(ledger, refill, dice);
   }
 
   /** Goes on from an arrangement. */
@@ -88,6 +92,7 @@ public final class Crewing {
         break;
       }
     }
+    untangling.everybody(halt);
     List<Integer> moments = new ArrayList<>(IntStream.range(0, parts.moments()).boxed().toList());
     double[] scarcity = moments.stream().mapToDouble(parts::scarcity).toArray();
     moments.sort(Comparator.comparingDouble((Integer m) -> -scarcity[m]).thenComparing(m -> m));
@@ -119,6 +124,7 @@ public final class Crewing {
           better |= parts.seatRound(round);
         }
       }
+      better |= untangling.everybody(halt);
       if (!better || halt.now()) {
         return;
       }
@@ -144,7 +150,7 @@ public final class Crewing {
    * @return moves tried
    */
   public long anneal(Budget budget, Watch watch) {
-    Moves moves = new Moves(ledger, dice);
+    Moves moves = new Moves(ledger, refill, dice);
     double start =
         Math.max(
             COOLEST_START,

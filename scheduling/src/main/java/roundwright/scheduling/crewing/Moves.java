@@ -17,9 +17,8 @@ final class Moves {
   private static final int SWAP_DUTIES = CHANGE_DUTY + 15;
   private static final int MOVE_COMPETITOR = SWAP_DUTIES + 12;
   private static final int SWAP_COMPETITORS = MOVE_COMPETITOR + 16;
-  private static final int REFILL_TRIES = 40;
   private static final int NEAR_GROUPS = 6;
-  private static final int MOST_THROWN_OUT = 6;
+  private static final int NOBODYS_GROUP = -1;
   private static final int LONGEST_WINDOW_MINUTES = 240;
 
   private final Ledger ledger;
@@ -27,10 +26,10 @@ final class Moves {
   private final Frame frame;
   private final Problem problem;
   private final Dice dice;
-  private final int[] thrownOut = new int[64];
-  private int thrownOutCount;
+  private final Refill refill;
 
-  Moves(Ledger ledger, Dice dice) {
+  Moves(Ledger ledger, Refill refill, Dice dice) {
+    this.refill = refill;
     this.ledger = ledger;
     this.board = ledger.board;
     this.frame = ledger.frame;
@@ -39,7 +38,7 @@ final class Moves {
   }
 
   boolean propose() {
-    thrownOutCount = 0;
+    refill.begin();
     int kind = dice.below(100);
     if (kind < CHANGE_DUTY) {
       return frame.places > 0 && changeDuty();
@@ -85,11 +84,12 @@ final class Moves {
       ledger.duty(place, person);
       return true;
     }
-    if (!throwOut(person, group)) {
+    if (!refill.solvesOnlyIn(person, NOBODYS_GROUP, group) || !refill.throwOut(person, group)) {
       return false;
     }
     ledger.duty(place, person);
-    return refill();
+    refill.fill();
+    return true;
   }
 
   private boolean swapDuties() {
@@ -134,7 +134,11 @@ final class Moves {
       return false;
     }
     int to = groups[dice.below(groups.length)];
-    return to != board.seatGroup[seat] && reseat(seat, to) && refill();
+    if (to == board.seatGroup[seat] || !refill.reseat(seat, to)) {
+      return false;
+    }
+    refill.fill();
+    return true;
   }
 
   private boolean swapCompetitors() {
@@ -150,59 +154,10 @@ final class Moves {
         || frame.seatPin[other] >= 0) {
       return false;
     }
-    return reseat(seat, groupB) && reseat(other, groupA) && refill();
-  }
-
-  private boolean reseat(int seat, int to) {
-    int person = problem.seatPerson[seat];
-    ledger.seat(seat, -1);
-    if (!board.couldTake(person, to) && !throwOut(person, to)) {
+    if (!refill.reseat(seat, groupB) || !refill.reseat(other, groupA)) {
       return false;
     }
-    ledger.seat(seat, to);
-    return true;
-  }
-
-  /** Empties the duties that keep a person from a group; false where more than duties do. */
-  private boolean throwOut(int person, int group) {
-    for (int i = board.commitmentCount(person) - 1; i >= 0; i--) {
-      int commitment = board.commitment(person, i);
-      int in = commitment >> 2;
-      if (!frame.conflict(in, group)) {
-        continue;
-      }
-      if ((commitment & 3) == Problem.SOLVING) {
-        return false;
-      }
-      int place = board.placeOf(person, in);
-      if (frame.placePin[place] >= 0 || thrownOutCount == MOST_THROWN_OUT) {
-        return false;
-      }
-      thrownOut[thrownOutCount++] = place;
-      ledger.duty(place, -1);
-    }
-    return true;
-  }
-
-  private boolean refill() {
-    for (int i = 0; i < thrownOutCount; i++) {
-      int place = thrownOut[i];
-      int group = frame.placeGroup[place];
-      int role = frame.placeRole[place];
-      if (board.placePerson[place] >= 0
-          || board.filled[group * 3 + role] >= board.wanted(group, role)) {
-        continue;
-      }
-      int[] able = frame.candidates[group * 3 + role];
-      int from = able.length == 0 ? 0 : dice.below(able.length);
-      for (int tries = 0; tries < Math.min(able.length, REFILL_TRIES); tries++) {
-        int person = able[(from + tries) % able.length];
-        if (board.couldTake(person, group)) {
-          ledger.duty(place, person);
-          break;
-        }
-      }
-    }
+    refill.fill();
     return true;
   }
 
@@ -238,11 +193,10 @@ final class Moves {
         continue;
       }
       int place = board.placeOf(person, group);
-      if (frame.placePin[place] >= 0 || thrownOutCount == thrownOut.length) {
+      if (frame.placePin[place] >= 0) {
         return -1;
       }
-      thrownOut[thrownOutCount++] = place;
-      ledger.duty(place, -1);
+      refill.empty(place);
       taken++;
     }
     return taken;
@@ -250,7 +204,7 @@ final class Moves {
 
   private boolean handOver(int fromIndex, int toIndex, int person) {
     for (int i = fromIndex; i < toIndex; i++) {
-      int place = thrownOut[i];
+      int place = refill.place(i);
       int group = frame.placeGroup[place];
       if (!problem.skilled(person, frame.round[group], frame.placeRole[place])
           || !frame.isFree(person, group)

@@ -50,7 +50,7 @@ final class Decoder {
     takenFrom = new int[problem.halls][16];
     takenTo = new int[problem.halls][16];
     takenCount = new int[problem.halls];
-    kept = new int[supply.pools][supply.stretches];
+    kept = new int[supply.stretches][supply.pools];
     start = new int[problem.rounds][];
     shape = new Shape[problem.rounds];
     firstStart = new int[problem.rounds];
@@ -85,7 +85,11 @@ final class Decoder {
   }
 
   int days() {
-    return Math.max(1, dayStart.length);
+    return dayStart.length;
+  }
+
+  int dayStart(int day) {
+    return dayStart[day];
   }
 
   /**
@@ -93,13 +97,13 @@ final class Decoder {
    *
    * @param order rounds by priority
    * @param shapes by round; null for a round without entrants
-   * @param day by round: not before that day
+   * @param earliest by round: not before that minute
    * @param pressure part of the people there to leave out of account, 0 to 1
    */
-  void decode(int[] order, Shape[] shapes, int[] day, double pressure) {
+  void decode(int[] order, Shape[] shapes, int[] earliest, double pressure) {
     Arrays.fill(takenCount, 0);
-    for (int[] pool : kept) {
-      Arrays.fill(pool, 0);
+    for (int[] stretch : kept) {
+      Arrays.fill(stretch, 0);
     }
     Arrays.fill(placed, false);
     shortage = 0;
@@ -114,7 +118,7 @@ final class Decoder {
       }
     }
     for (int r : order) {
-      place(r, day);
+      place(r, earliest);
     }
   }
 
@@ -131,29 +135,29 @@ final class Decoder {
     return i < pinStart[r].length && pinStart[r][i] != NOT_FOUND;
   }
 
-  private void place(int r, int[] day) {
+  private void place(int r, int[] earliest) {
     if (placed[r] || shape[r] == null) {
       return;
     }
-    int ready = Math.max(problem.notBefore[r], dayStart[Math.min(day[r], dayStart.length - 1)]);
+    int ready = Math.max(problem.notBefore[r], earliest[r]);
     int before = problem.roundBefore[r];
     if (before >= 0 && shape[before] != null) {
-      place(before, day);
+      place(before, earliest);
       ready = Math.max(ready, lastEnd[before] + turnaround);
     }
     Shape own = shape[r];
     firstStart[r] = NOT_FOUND;
     lastEnd[r] = Problem.NEVER;
-    int earliest = ready;
+    int next = ready;
     int lastHall = -1;
     for (int i = 0; i < own.groups; i++) {
       if (!pinned(r, i)) {
-        int from = own.hall[i] > lastHall || lastHall < 0 ? earliest : earliest + 1;
+        int from = own.hall[i] > lastHall || lastHall < 0 ? next : next + 1;
         start[r][i] = findStart(own, i, from);
         take(own, i, start[r][i]);
       }
-      if (start[r][i] >= earliest) {
-        earliest = start[r][i];
+      if (start[r][i] >= next) {
+        next = start[r][i];
         lastHall = own.hall[i];
       }
       firstStart[r] = Math.min(firstStart[r], start[r][i]);
@@ -182,10 +186,12 @@ final class Decoder {
         int later = afterClash(hall, at, minutes);
         if (later > at) {
           at = onGrid(hall, later);
-        } else if (withSupply && !suffices(keeps, at, at + minutes)) {
-          at = onGrid(hall, at + 1);
         } else {
-          return at;
+          later = withSupply ? afterShortage(keeps, at, at + minutes) : at;
+          if (later == at) {
+            return at;
+          }
+          at = onGrid(hall, later);
         }
       }
     }
@@ -202,20 +208,19 @@ final class Decoder {
     return at;
   }
 
-  private boolean suffices(int[] keeps, int from, int to) {
-    int last = supply.stretch(to - 1);
-    for (int pool = 0; pool < supply.pools; pool++) {
-      int keep = keeps[pool];
-      if (keep == 0) {
-        continue;
-      }
-      for (int s = supply.stretch(from); s <= last; s++) {
-        if ((kept[pool][s] + keep) * (long) LIMIT_PARTS > (long) supply.there[pool][s] * limit) {
-          return false;
+  /** The soonest minute that leaves a stretch without enough people behind, or the same. */
+  private int afterShortage(int[] keeps, int from, int to) {
+    int first = supply.stretch(from);
+    for (int s = supply.stretch(to - 1); s >= first; s--) {
+      for (int pool = 0; pool < supply.pools; pool++) {
+        int keep = keeps[pool];
+        if (keep > 0
+            && (kept[s][pool] + keep) * (long) LIMIT_PARTS > (long) supply.there[s][pool] * limit) {
+          return Math.max(from + 1, supply.firstMinute + (s + 1) * Supply.STRETCH_MINUTES);
         }
       }
     }
-    return true;
+    return from;
   }
 
   private int afterEverything(Shape own, int group, int from) {
@@ -258,10 +263,10 @@ final class Decoder {
     takenTo[hall][i] = end;
     int[] keeps = own.kept[group];
     int last = supply.stretch(end - 1);
-    for (int pool = 0; pool < supply.pools; pool++) {
-      for (int s = supply.stretch(at); s <= last; s++) {
-        kept[pool][s] += keeps[pool];
-        shortage += Math.max(0, Math.min(keeps[pool], kept[pool][s] - supply.there[pool][s]));
+    for (int s = supply.stretch(at); s <= last; s++) {
+      for (int pool = 0; pool < supply.pools; pool++) {
+        kept[s][pool] += keeps[pool];
+        shortage += Math.max(0, Math.min(keeps[pool], kept[s][pool] - supply.there[s][pool]));
       }
     }
   }

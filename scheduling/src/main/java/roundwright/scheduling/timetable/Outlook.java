@@ -1,8 +1,11 @@
 package roundwright.scheduling.timetable;
 
+import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.List;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.cost.RuleName;
+import roundwright.scheduling.model.Round;
 
 /**
  * What a layout is likely to cost once people are in it, without putting them there: everybody is
@@ -10,10 +13,13 @@ import roundwright.scheduling.cost.RuleName;
  * of it. In strain units; each likely breach counts {@link #BREACH}.
  */
 final class Outlook {
-  static final double BREACH = 20_000;
+  static final double BREACH = 1500;
 
   private static final double SHORT_PERSON_STRETCH = 15;
-  private static final double MUST_MOVE_GROUP = 3;
+  private static final double PLACE_MOVED = 2;
+  private static final double WRONG_SEEDING = 500;
+  private static final double LESSON = 400;
+  private static final int MOST_TRIES = 120;
   private static final double ROUND_OVER_TWO_DAYS = 150;
   private static final double MINUTES_AN_HOUR = 60.0;
   private static final int MINUTES_A_DAY = 1440;
@@ -27,16 +33,25 @@ final class Outlook {
   private final double waiting;
   private final double hops;
   private final double load;
-  private final double likelyAway;
   private final double shares;
   private final int[] fewest;
   private final int[] dayOfSeat;
+  private final int[] hallOfSeat;
+  private final int[] placeOfSeat;
+  private final int[] seededOfSeat;
+  private final int[] order;
+  private final int[] choices;
+  private final List<Learned> learned = new ArrayList<>();
+  private final int[][] crowd;
+  private final boolean[] troubled;
+  private final int[] aloneMinutes;
   private final int[] from;
   private final int[] to;
   private final int[] spanFrom;
   private final int[] spanTo;
   private final int days;
   private final int firstMinute;
+  private int triesLeft;
 
   Outlook(Problem problem, Decoder layout, Supply supply) {
     this.problem = problem;
@@ -46,7 +61,6 @@ final class Outlook {
     waiting = weight(RuleName.WAITING);
     hops = weight(RuleName.HOPS);
     load = weight(RuleName.LOAD);
-    likelyAway = weight(RuleName.LIKELY_AWAY);
     shares = Math.max(1, Arrays.stream(problem.share).sum());
     fewest = new int[problem.rounds];
     for (int r = 0; r < problem.rounds; r++) {
@@ -55,6 +69,21 @@ final class Outlook {
     }
     int most = Arrays.stream(problem.personSeats).mapToInt(own -> own.length).max().orElse(0);
     dayOfSeat = new int[most];
+    hallOfSeat = new int[most];
+    placeOfSeat = new int[most];
+    seededOfSeat = new int[most];
+    order = new int[most];
+    choices = new int[most];
+    crowd = new int[problem.rounds][];
+    troubled = new boolean[most];
+    aloneMinutes = new int[problem.seats];
+    for (int seat = 0; seat < problem.seats; seat++) {
+      int r = problem.seatRound[seat];
+      aloneMinutes[seat] =
+          problem.roundList.get(r).minutesPerGroup().isPresent()
+              ? 0
+              : problem.pace.aloneMinutes(r, seat);
+    }
     from = new int[most];
     to = new int[most];
     firstMinute = supply.firstMinute - MINUTES_A_DAY;
@@ -77,6 +106,10 @@ final class Outlook {
         continue;
       }
       price += priceRound(r, shape);
+      if (crowd[r] == null || crowd[r].length < shape.groups) {
+        crowd[r] = new int[shape.groups];
+      }
+      Arrays.fill(crowd[r], 0);
       for (int i = 0; i < shape.groups; i++) {
         int crew = shape.crew[i][0] + shape.crew[i][1] + shape.crew[i][2];
         dutyMinutes += (double) crew * shape.minutes[i];
@@ -92,7 +125,83 @@ final class Outlook {
     for (int p = 0; p < problem.people; p++) {
       price += pricePerson(p);
     }
+    return price + priceCrowds() + priceOverlaps();
+  }
+
+  /** What was learned from plans that broke: rounds better kept apart, shapes better not taken. */
+  private double priceOverlaps() {
+    double price = 0;
+    for (int i = 0; i < learned.size(); i++) {
+      Learned one = learned.get(i);
+      Shape a = layout.shape[one.round];
+      if (one.shape != null) {
+        price += one.shape == a ? one.price : 0;
+        continue;
+      }
+      Shape b = layout.shape[one.other];
+      int meeting = 0;
+      for (int g = 0; g < a.groups; g++) {
+        int startA = layout.start[one.round][g];
+        int endA = startA + a.minutes[g];
+        for (int h = 0; h < b.groups; h++) {
+          int startB = layout.start[one.other][h];
+          int way = problem.way[a.hall[g]][b.hall[h]];
+          meeting += startA < startB + b.minutes[h] + way && startB < endA + way ? 1 : 0;
+        }
+      }
+      price += one.price * meeting / (a.groups * b.groups);
+    }
     return price;
+  }
+
+  /** A price on two rounds' meeting in time, or on a round's shape. */
+  private static final class Learned {
+    final int round;
+    final int other;
+    final Shape shape;
+    double price;
+
+    Learned(int round, int other, Shape shape) {
+      this.round = round;
+      this.other = other;
+      this.shape = shape;
+    }
+  }
+
+  void raiseMeeting(int a, int b) {
+    raise(Math.min(a, b), Math.max(a, b), null);
+  }
+
+  void raiseShape(Shape shape) {
+    raise(shape.round, -1, shape);
+  }
+
+  private void raise(int round, int other, Shape shape) {
+    for (Learned one : learned) {
+      if (one.round == round && one.other == other && one.shape == shape) {
+        one.price += LESSON;
+        return;
+      }
+    }
+    Learned one = new Learned(round, other, shape);
+    one.price = LESSON;
+    learned.add(one);
+  }
+
+  void forgetLessons() {
+    learned.clear();
+  }
+
+  /** People in trouble who would find the group full that they could be in. */
+  private double priceCrowds() {
+    int beyond = 0;
+    for (int r = 0; r < problem.rounds; r++) {
+      Shape shape = layout.shape[r];
+      for (int i = 0; shape != null && i < shape.groups; i++) {
+        beyond += Math.max(0, crowd[r][i] - shape.capacity[i]);
+      }
+    }
+    return beyond * BREACH / 2;
   }
 
   private double priceRound(int r, Shape shape) {
@@ -149,62 +258,136 @@ final class Outlook {
 
   private double pricePerson(int person) {
     int[] own = problem.personSeats[person];
-    double price = 0;
+    int wrong = 0;
     for (int s = 0; s < own.length; s++) {
       int r = problem.seatRound[own[s]];
-      Shape shape = layout.shape[r];
-      int place = place(own[s], r, shape);
-      from[s] = layout.start[r][place];
-      to[s] = from[s] + shape.minutes[place];
-      dayOfSeat[s] = problem.hallClock[shape.hall[place]].date(from[s]);
-      if (!problem.present(person, from[s], to[s])) {
-        price += priceAway(person, r, shape);
-      }
+      take(s, r, seededPlace(own[s], r, layout.shape[r]));
+      wrong += suits(person, own[s], s, r) ? 0 : 1;
       for (int t = 0; t < s; t++) {
-        if (from[s] < to[t] && from[t] < to[s]) {
-          price += priceClash(own[s], own[t]);
-        }
+        wrong += clash(s, t) ? 1 : 0;
       }
     }
+    double price = wrong == 0 ? 0 : priceMoving(person, own, wrong);
     for (int s = 0; s < own.length; s++) {
+      if (wrong > 0 && troubled[s]) {
+        crowd[problem.seatRound[own[s]]][placeOfSeat[s]]++;
+      }
       price += priceDay(own, s);
     }
     return price;
   }
 
-  private int place(int seat, int r, Shape shape) {
-    return problem.roundList.get(r).seeding() == roundwright.scheduling.model.Round.Seeding.MIXED
+  private void take(int s, int round, int place) {
+    Shape shape = layout.shape[round];
+    placeOfSeat[s] = place;
+    from[s] = layout.start[round][place];
+    to[s] = from[s] + shape.minutes[place];
+    hallOfSeat[s] = shape.hall[place];
+    dayOfSeat[s] = problem.hallClock[hallOfSeat[s]].date(from[s]);
+  }
+
+  private boolean clash(int s, int t) {
+    int way = problem.way[hallOfSeat[s]][hallOfSeat[t]];
+    return from[s] < to[t] + way && from[t] < to[s] + way;
+  }
+
+  /** Whether the person is there, and the slot long enough for them alone. */
+  private boolean suits(int person, int seat, int s, int round) {
+    return (problem.roundLikely[round] || problem.present(person, from[s], to[s]))
+        && !problem.busy(person, from[s], to[s])
+        && aloneMinutes[seat] <= to[s] - from[s];
+  }
+
+  private int seededPlace(int seat, int r, Shape shape) {
+    return problem.roundList.get(r).seeding() == Round.Seeding.MIXED
         ? problem.seatRank[seat] % shape.groups
         : (int) ((long) problem.seatRank[seat] * shape.groups / problem.entrants(r));
   }
 
-  /** What comes of a seeded group outside the person's windows. */
-  private double priceAway(int person, int r, Shape shape) {
-    for (int i = 0; i < shape.groups; i++) {
-      int start = layout.start[r][i];
-      if (problem.present(person, start, start + shape.minutes[i])) {
-        return MUST_MOVE_GROUP;
-      }
+  /**
+   * What comes of seeded groups that cannot all be: other groups, or breaches where there are none.
+   * First only the seats in trouble look for another place, then all of them.
+   */
+  private double priceMoving(int person, int[] own, int wrong) {
+    for (int s = 0; s < own.length; s++) {
+      seededOfSeat[s] = placeOfSeat[s];
     }
-    return problem.roundLikely[r] ? likelyAway : BREACH;
+    markTrouble(person, own);
+    boolean found = search(person, own, true) || search(person, own, false);
+    if (!found) {
+      for (int s = 0; s < own.length; s++) {
+        take(s, problem.seatRound[own[s]], seededOfSeat[s]);
+      }
+      return BREACH + wrong * WRONG_SEEDING;
+    }
+    double moved = 0;
+    for (int s = 0; s < own.length; s++) {
+      moved += Math.abs(placeOfSeat[s] - seededOfSeat[s]);
+    }
+    return moved * PLACE_MOVED;
   }
 
-  /** What comes of two seeded groups at one time: another group of either, or a breach. */
-  private double priceClash(int seat, int other) {
-    int a = problem.seatRound[seat];
-    int b = problem.seatRound[other];
-    Shape shapeA = layout.shape[a];
-    Shape shapeB = layout.shape[b];
-    for (int i = 0; i < shapeA.groups; i++) {
-      for (int j = 0; j < shapeB.groups; j++) {
-        int startA = layout.start[a][i];
-        int startB = layout.start[b][j];
-        if (startA >= startB + shapeB.minutes[j] || startB >= startA + shapeA.minutes[i]) {
-          return MUST_MOVE_GROUP;
+  private void markTrouble(int person, int[] own) {
+    for (int s = 0; s < own.length; s++) {
+      troubled[s] = !suits(person, own[s], s, problem.seatRound[own[s]]);
+      for (int t = 0; t < s; t++) {
+        if (clash(s, t)) {
+          troubled[s] = true;
+          troubled[t] = true;
         }
       }
     }
-    return BREACH;
+  }
+
+  private boolean search(int person, int[] own, boolean onlyTroubled) {
+    for (int s = 0; s < own.length; s++) {
+      choices[s] =
+          onlyTroubled && !troubled[s] ? 1 : layout.shape[problem.seatRound[own[s]]].groups;
+      int at = s;
+      while (at > 0 && choices[order[at - 1]] > choices[s]) {
+        order[at] = order[at - 1];
+        at--;
+      }
+      order[at] = s;
+    }
+    triesLeft = MOST_TRIES;
+    return findPlaces(person, own, 0);
+  }
+
+  private boolean findPlaces(int person, int[] own, int done) {
+    if (done == own.length) {
+      return true;
+    }
+    int s = order[done];
+    int round = problem.seatRound[own[s]];
+    int groups = layout.shape[round].groups;
+    int seeded = seededOfSeat[s];
+    int steps = choices[s] == 1 ? 1 : 2 * groups;
+    for (int step = 0; step < steps; step++) {
+      int place = step % 2 == 0 ? seeded + step / 2 : seeded - 1 - step / 2;
+      if (place < 0 || place >= groups) {
+        continue;
+      }
+      if (triesLeft-- <= 0) {
+        return false;
+      }
+      take(s, round, place);
+      if (suits(person, own[s], s, round)
+          && clashesWithNone(s, done)
+          && findPlaces(person, own, done + 1)) {
+        return true;
+      }
+    }
+    return false;
+  }
+
+  private boolean clashesWithNone(int s, int done) {
+    for (int i = 0; i < done; i++) {
+      if (clash(s, order[i])) {
+        return false;
+      }
+    }
+    return true;
   }
 
   /** Waiting and ways of the day that begins at a seat, charged once for each day. */
@@ -222,10 +405,8 @@ final class Outlook {
       if (dayOfSeat[t] == dayOfSeat[s]) {
         first = Math.min(first, from[t]);
         last = Math.max(last, to[t]);
-        int r = problem.seatRound[own[t]];
-        int hall = layout.shape[r].hall[place(own[t], r, layout.shape[r])];
-        halls |= 1L << hall;
-        venues |= 1L << problem.hallVenue[hall];
+        halls |= 1L << hallOfSeat[t];
+        venues |= 1L << problem.hallVenue[hallOfSeat[t]];
       }
     }
     int otherVenues = Long.bitCount(venues) - 1;

@@ -24,6 +24,9 @@ final class Shape {
   final int[] size;
   final int[] minutes;
 
+  /** Most people each group may hold with its stations in use. */
+  final int[] capacity;
+
   /** Of each group and role. */
   final int[][] crew;
 
@@ -37,6 +40,7 @@ final class Shape {
     stations = new int[groups];
     size = new int[groups];
     minutes = new int[groups];
+    capacity = new int[groups];
     crew = new int[groups][3];
   }
 
@@ -65,10 +69,10 @@ final class Shape {
         }
         for (int level = 0; level < STATION_LEVELS; level++) {
           Shape shape = make(problem, round, cycle, groups, level);
-          if (found.stream().noneMatch(shape::same)) {
-            shape.kept = supply.kept(shape);
-            found.add(shape);
-          }
+          shape.kept = supply.kept(shape);
+          List.of(shape, shape.allAsLongAsTheLongest()).stream()
+              .filter(one -> found.stream().noneMatch(one::same))
+              .forEach(found::add);
         }
       }
     }
@@ -94,7 +98,24 @@ final class Shape {
   }
 
   private boolean same(Shape other) {
-    return Arrays.equals(hall, other.hall) && Arrays.equals(stations, other.stations);
+    return Arrays.equals(hall, other.hall)
+        && Arrays.equals(stations, other.stations)
+        && Arrays.equals(minutes, other.minutes);
+  }
+
+  /** The same with room in each group for everybody: for rounds with people who come late. */
+  private Shape allAsLongAsTheLongest() {
+    Shape shape = new Shape(round, groups);
+    System.arraycopy(hall, 0, shape.hall, 0, groups);
+    System.arraycopy(stations, 0, shape.stations, 0, groups);
+    System.arraycopy(size, 0, shape.size, 0, groups);
+    System.arraycopy(capacity, 0, shape.capacity, 0, groups);
+    Arrays.fill(shape.minutes, Arrays.stream(minutes).max().getAsInt());
+    for (int i = 0; i < groups; i++) {
+      shape.crew[i] = crew[i];
+    }
+    shape.kept = kept;
+    return shape;
   }
 
   /** The halls its groups take in turn: each alone, each two together, all together. */
@@ -184,6 +205,7 @@ final class Shape {
     Round given = problem.roundList.get(round);
     int[][] members = members(problem);
     for (int i = 0; i < groups; i++) {
+      capacity[i] = problem.largestSize(round, stations[i]);
       for (int role = 0; role < 3; role++) {
         crew[i][role] = problem.wanted(round, role, stations[i], size[i]);
       }
@@ -266,6 +288,7 @@ final class Shape {
         for (int b = 0; b < borrowed; b++) {
           own.set(own.size() - 1 - b, slower.get(from + b));
         }
+        own.add(slower.get(slower.size() - 1));
       }
     }
   }

@@ -11,7 +11,7 @@ import roundwright.scheduling.model.Window;
  * stretches of five minutes, for each discipline's scramblers, all scramblers, judges, runners and
  * everybody.
  *
- * <p>Layout: amounts are sixteenths of a person; {@code there[pool][stretch]}.
+ * <p>Layout: amounts are sixteenths of a person; {@code there[stretch][pool]}.
  */
 final class Supply {
   static final int STRETCH_MINUTES = 5;
@@ -38,7 +38,7 @@ final class Supply {
     }
     firstMinute = first;
     stretches = (last - first) / STRETCH_MINUTES + 1;
-    there = new int[pools][stretches];
+    there = new int[stretches][pools];
     for (int p = 0; p < problem.people; p++) {
       countIn(p);
     }
@@ -51,14 +51,16 @@ final class Supply {
   }
 
   private void countIn(int person) {
+    boolean[] in = new boolean[pools];
+    for (int pool = 0; pool < pools; pool++) {
+      in[pool] = inPool(person, pool);
+    }
     for (int s = 0; s < stretches; s++) {
       int from = firstMinute + s * STRETCH_MINUTES;
       int to = from + STRETCH_MINUTES;
       if (problem.present(person, from, to) && !problem.busy(person, from, to)) {
         for (int pool = 0; pool < pools; pool++) {
-          if (inPool(person, pool)) {
-            there[pool][s] += PARTS;
-          }
+          there[s][pool] += in[pool] ? PARTS : 0;
         }
       }
     }

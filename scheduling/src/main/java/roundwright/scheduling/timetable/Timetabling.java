@@ -15,7 +15,8 @@ import roundwright.scheduling.core.Slot;
  */
 public final class Timetabling {
   private static final double WARM = 300;
-  private static final double COOL = 1;
+  private static final double LUKEWARM = 60;
+  private static final double COOL = 2;
   private static final int LOOKS_BETWEEN = 16;
 
   private final Decoder decoder;
@@ -24,11 +25,13 @@ public final class Timetabling {
   private final int[] rounds;
   private final int[] firstOrder;
   private final Shape[] shape;
-  private final int[] day;
+  private final int[] earliest;
 
   private Dice dice;
   private double pressure;
   private int[] order;
+  private boolean begun;
+  private double foundPrice;
 
   public Timetabling(Problem problem) {
     Supply supply = new Supply(problem);
@@ -39,7 +42,7 @@ public final class Timetabling {
     }
     rounds = IntStream.range(0, problem.rounds).filter(r -> !shapes.get(r).isEmpty()).toArray();
     shape = new Shape[problem.rounds];
-    day = new int[problem.rounds];
+    earliest = new int[problem.rounds];
     firstOrder =
         IntStream.of(rounds)
             .boxed()
@@ -58,7 +61,8 @@ public final class Timetabling {
   }
 
   /**
-   * The best layout found within the budget, as slots; empty where no round has entrants.
+   * The best layout found within the budget, as slots; empty where no round has entrants. The first
+   * search begins anew and warm, later ones go on from the best one, cooler.
    *
    * @param partKeptBack part of the people there that no crew may count on, 0 to 1: more of it
    *     spreads the groups further apart
@@ -66,23 +70,24 @@ public final class Timetabling {
   public List<Slot> search(double partKeptBack, Dice chance, Budget budget) {
     pressure = partKeptBack;
     dice = chance;
-    order = firstOrder.clone();
-    for (int r : rounds) {
-      shape[r] = shapes.get(r).get(0);
-      day[r] = 0;
+    double warm = begun ? LUKEWARM : WARM;
+    if (!begun) {
+      startAnew();
     }
+    begun = true;
     double price = lay();
     List<Slot> best = decoder.slots();
+    Choice bestChoice = choice();
     double bestPrice = price;
     long tried = 0;
-    double temperature = WARM;
+    double temperature = warm;
     while (rounds.length > 0) {
       if (tried % LOOKS_BETWEEN == 0) {
         double used = budget.used(tried);
         if (used >= 1) {
           break;
         }
-        temperature = WARM * StrictMath.pow(COOL / WARM, used);
+        temperature = warm * StrictMath.pow(COOL / warm, used);
       }
       tried++;
       Change change = change();
@@ -93,16 +98,72 @@ public final class Timetabling {
         if (then < bestPrice) {
           bestPrice = then;
           best = decoder.slots();
+          bestChoice = choice();
         }
       } else {
         change.undo();
       }
     }
+    take(bestChoice);
+    foundPrice = bestPrice;
     return best;
   }
 
+  /** Forgets the layout and what was learned, so that the next search begins anew. */
+  public void forget() {
+    begun = false;
+    outlook.forgetLessons();
+  }
+
+  private void startAnew() {
+    order = firstOrder.clone();
+    for (int r : rounds) {
+      shape[r] = shapes.get(r).get(0);
+      earliest[r] = Problem.NEVER;
+    }
+  }
+
+  /** Makes it dearer that two rounds run at one time: somebody could not be in both. */
+  public void keepApart(int oneRound, int otherRound) {
+    if (oneRound != otherRound) {
+      outlook.raiseMeeting(oneRound, otherRound);
+    }
+  }
+
+  /** Makes the shape that a round now has dearer: somebody did not find a group in it. */
+  public void reshape(int round) {
+    if (shape[round] != null && shapes.get(round).size() > 1) {
+      outlook.raiseShape(shape[round]);
+    }
+  }
+
+  private record Choice(List<Integer> order, List<Shape> shape, List<Integer> earliest) {}
+
+  private Choice choice() {
+    return new Choice(
+        IntStream.of(order).boxed().toList(),
+        java.util.Collections.unmodifiableList(
+            new ArrayList<>(java.util.Arrays.asList(shape.clone()))),
+        IntStream.of(earliest).boxed().toList());
+  }
+
+  private void take(Choice choice) {
+    for (int i = 0; i < order.length; i++) {
+      order[i] = choice.order.get(i);
+    }
+    for (int r = 0; r < shape.length; r++) {
+      shape[r] = choice.shape.get(r);
+      earliest[r] = choice.earliest.get(r);
+    }
+  }
+
+  /** What the last layout found is likely to cost, in strain units; a breach counts 20,000. */
+  public double foundPrice() {
+    return foundPrice;
+  }
+
   private double lay() {
-    decoder.decode(order, shape, day, pressure);
+    decoder.decode(order, shape, earliest, pressure);
     return outlook.price();
   }
 
@@ -116,8 +177,8 @@ public final class Timetabling {
     if (kind < 3 && shapes.get(r).size() > 1) {
       return otherShape(r);
     }
-    if (kind < 5 && decoder.days() > 1) {
-      return otherDay(r);
+    if (kind < 6) {
+      return otherEarliest(r);
     }
     return otherOrder(kind);
   }
@@ -128,10 +189,19 @@ public final class Timetabling {
     return () -> shape[r] = before;
   }
 
-  private Change otherDay(int r) {
-    int before = day[r];
-    day[r] = dice.below(decoder.days());
-    return () -> day[r] = before;
+  /** Not before some day, not before another round is over, or whenever it may be. */
+  private Change otherEarliest(int r) {
+    int before = earliest[r];
+    int kind = dice.below(4);
+    if (kind == 0) {
+      earliest[r] = Problem.NEVER;
+    } else if (kind == 1 && decoder.days() > 0) {
+      earliest[r] = decoder.dayStart(dice.below(decoder.days()));
+    } else {
+      int other = rounds[dice.below(rounds.length)];
+      earliest[r] = kind == 2 ? decoder.lastEnd[other] : decoder.firstStart[other];
+    }
+    return () -> earliest[r] = before;
   }
 
   private Change otherOrder(int kind) {

@@ -34,6 +34,9 @@ import roundwright.scheduling.timetable.Timetabling;
  */
 public final class Planner {
   private static final int MOST_DAY_PLANS = 16;
+  private static final int ENOUGH_DAY_PLANS = 6;
+  private static final double FEWEST_LAYOUTS = 50;
+  private static final double MOST_LAYOUTS = 1_000_000;
   private static final double FIRST_DAY_PLAN_PART = 0.15;
   private static final double DAY_PLAN_PART = 0.03;
   private static final double DAY_PLANS_UNTIL = 0.3;
@@ -51,14 +54,12 @@ public final class Planner {
   private final RuleBook book;
   private final Spending spending;
   private final Effort effort;
-  private final Progress progress;
 
   private Planner(Event event, Effort effort, Progress progress) {
     this.event = event;
     this.problem = new Problem(event);
     this.book = new RuleBook(problem);
     this.effort = effort;
-    this.progress = progress;
     this.spending = new Spending(effort, progress);
   }
 
@@ -86,14 +87,16 @@ public final class Planner {
     Arrangement best = null;
     double pressure = FIRST_PRESSURE;
     for (int attempt = 0; attempt < MOST_DAY_PLANS; attempt++) {
-      if (best != null && enoughDayPlans(best)) {
+      if (best != null && enoughDayPlans(best, attempt)) {
         break;
       }
       Dice dice = new Dice(effort.seed() * 1_000_003 + attempt);
-      double part = attempt == 0 ? FIRST_DAY_PLAN_PART : DAY_PLAN_PART;
-      Crewing crewing = new Crewing(layOut(timetabling, pressure, part, dice), book, dice);
+      Frame frame = layOut(timetabling, pressure, attempt, dice, best);
+      Crewing crewing = new Crewing(frame, book, dice);
       crewing.firstPlan(best == null ? spending::overdue : spending::over);
-      crewing.polish(spending::over);
+      if (attempt > 0) {
+        crewing.polish(spending::over);
+      }
       Arrangement found = crewing.arrangement();
       if (found.hard > 0) {
         boolean gaps = Lessons.learn(found.board(), timetabling);
@@ -109,25 +112,44 @@ public final class Planner {
     return best;
   }
 
-  private boolean enoughDayPlans(Arrangement best) {
-    return spending.used() > (best.hard == 0 ? DAY_PLANS_UNTIL : DAY_PLANS_UNTIL_IF_BROKEN);
+  private boolean enoughDayPlans(Arrangement best, int attempts) {
+    boolean enough = best.hard == 0 && attempts >= ENOUGH_DAY_PLANS;
+    return enough
+        || spending.over()
+        || spending.used() > (best.hard == 0 ? DAY_PLANS_UNTIL : DAY_PLANS_UNTIL_IF_BROKEN);
   }
 
-  private Frame layOut(Timetabling timetabling, double pressure, double part, Dice dice) {
-    double usedBefore = spending.used();
-    long most =
-        effort.steps().isPresent()
-            ? Math.max(50, Math.round(effort.steps().getAsLong() / MOVES_PER_LAYOUT * part))
-            : Long.MAX_VALUE;
+  /**
+   * The first day plan is laid out in no time, so that there is something to stop with; the second
+   * takes its time, and those after it go on from there.
+   */
+  private Frame layOut(
+      Timetabling timetabling, double pressure, int attempt, Dice dice, Arrangement best) {
+    double part =
+        switch (attempt) {
+          case 0 -> 0;
+          case 1 -> FIRST_DAY_PLAN_PART;
+          default -> DAY_PLAN_PART;
+        };
+    double usedBefore = spending.usedTime();
+    double steps = effort.steps().orElse(Long.MAX_VALUE);
+    double most = Math.max(FEWEST_LAYOUTS, Math.min(MOST_LAYOUTS, steps / MOVES_PER_LAYOUT) * part);
+    List<String> wrong = best == null ? List.of() : stillWrong(best);
     List<Slot> slots =
         timetabling.search(
             pressure,
             dice,
             layouts -> {
-              double bySteps = (double) layouts / most;
-              double byTime = (spending.usedTime() - usedBefore) / part;
-              return spending.over() ? 1 : Math.max(bySteps, byTime);
+              if (best != null) {
+                spending.reportNowAndThen(
+                    Progress.Stage.TIMETABLE, 0, best.hard, best.strain, wrong);
+              }
+              double byTime = part == 0 ? 0 : (spending.usedTime() - usedBefore) / part;
+              return spending.over() ? 1 : Math.max(layouts / most, byTime);
             });
+    if (attempt == 0) {
+      timetabling.forget();
+    }
     return new Frame(problem, slots);
   }
 
@@ -199,9 +221,12 @@ public final class Planner {
     long tried =
         crewing.anneal(
             budget,
-            (hard, strain, moves) ->
-                spending.reportNowAndThen(
-                    thread, moves, hard, strain, hard == 0 ? List.of() : wrong));
+            (hard, strain, moves) -> {
+              if (thread == 0) {
+                List<String> still = hard == 0 ? List.of() : wrong;
+                spending.reportNowAndThen(Progress.Stage.CREWING, moves, hard, strain, still);
+              }
+            });
     spending.spent(tried);
     crewing.polish(spending::over);
     return Collections.min(List.of(from, crewing.arrangement()));

@@ -54,17 +54,14 @@ final class Spending {
         new Progress.Report(stage, Planner.cost(hard, strain), lastReport, steps, wrong));
   }
 
-  void reportNowAndThen(int thread, long moves, long hard, long strain, List<String> wrong) {
-    if (thread == 0 && elapsedSeconds() - lastReport >= SECONDS_BETWEEN_REPORTS) {
+  void reportNowAndThen(
+      Progress.Stage stage, long moves, long hard, long strain, List<String> wrong) {
+    if (elapsedSeconds() - lastReport >= SECONDS_BETWEEN_REPORTS) {
       synchronized (this) {
         lastReport = elapsedSeconds();
         progress.report(
             new Progress.Report(
-                Progress.Stage.CREWING,
-                Planner.cost(hard, strain),
-                lastReport,
-                steps + moves,
-                wrong));
+                stage, Planner.cost(hard, strain), lastReport, steps + moves, wrong));
       }
     }
   }

@@ -47,6 +47,17 @@ public final class LocalClock {
     return minute + offsetMinutes[at];
   }
 
+  /** Whether the wall time comes twice, since clocks are put back around it. */
+  public boolean comesTwice(int minute) {
+    for (int i = 1; i < since.length; i++) {
+      int putBack = offsetMinutes[i - 1] - offsetMinutes[i];
+      if (putBack > 0 && minute >= since[i] - putBack && minute < since[i] + putBack) {
+        return true;
+      }
+    }
+    return false;
+  }
+
   /** The calendar date as days since 1970-01-01. */
   public int date(int minute) {
     return Math.floorDiv(wall(minute), MINUTES_A_DAY);

@@ -186,6 +186,8 @@ final class Decoder {
         int later = afterClash(hall, at, minutes);
         if (later > at) {
           at = onGrid(hall, later);
+        } else if (hasNoName(hall, at) || hasNoName(hall, at + minutes)) {
+          at = onGrid(hall, at + 1);
         } else {
           later = withSupply ? afterShortage(keeps, at, at + minutes) : at;
           if (later == at) {
@@ -196,6 +198,11 @@ final class Decoder {
       }
     }
     return NOT_FOUND;
+  }
+
+  /** Plans are told in wall time, which cannot name an hour that comes twice. */
+  private boolean hasNoName(int hall, int minute) {
+    return problem.hallClock[hall].comesTwice(minute);
   }
 
   /** The soonest minute at which no group in the way is left, or the same where none is. */

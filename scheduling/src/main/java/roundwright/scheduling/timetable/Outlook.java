@@ -262,9 +262,14 @@ final class Outlook {
     for (int s = 0; s < own.length; s++) {
       int r = problem.seatRound[own[s]];
       take(s, r, seededPlace(own[s], r, layout.shape[r]));
-      wrong += suits(person, own[s], s, r) ? 0 : 1;
+      troubled[s] = !suits(person, own[s], s, r);
+      wrong += troubled[s] ? 1 : 0;
       for (int t = 0; t < s; t++) {
-        wrong += clash(s, t) ? 1 : 0;
+        if (clash(s, t)) {
+          troubled[s] = true;
+          troubled[t] = true;
+          wrong++;
+        }
       }
     }
     double price = wrong == 0 ? 0 : priceMoving(person, own, wrong);
@@ -312,7 +317,6 @@ final class Outlook {
     for (int s = 0; s < own.length; s++) {
       seededOfSeat[s] = placeOfSeat[s];
     }
-    markTrouble(person, own);
     boolean found = search(person, own, true) || search(person, own, false);
     if (!found) {
       for (int s = 0; s < own.length; s++) {
@@ -325,18 +329,6 @@ final class Outlook {
       moved += Math.abs(placeOfSeat[s] - seededOfSeat[s]);
     }
     return moved * PLACE_MOVED;
-  }
-
-  private void markTrouble(int person, int[] own) {
-    for (int s = 0; s < own.length; s++) {
-      troubled[s] = !suits(person, own[s], s, problem.seatRound[own[s]]);
-      for (int t = 0; t < s; t++) {
-        if (clash(s, t)) {
-          troubled[s] = true;
-          troubled[t] = true;
-        }
-      }
-    }
   }
 
   private boolean search(int person, int[] own, boolean onlyTroubled) {

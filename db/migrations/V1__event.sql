@@ -17,7 +17,7 @@ create table venue (
   code varchar(40) not null,
   position integer not null,
   name varchar(500) not null,
-  address varchar(300),
+  address varchar(500),
   zone varchar(60) not null,
   version integer default 0 not null,
   primary key (event_id, code),

@@ -20,6 +20,9 @@ create table plan_group (
   number integer not null,
   hall_code varchar(40) not null,
   stations integer not null,
+  judges_wanted integer not null,
+  scramblers_wanted integer not null,
+  runners_wanted integer not null,
   starts_at timestamp with time zone not null,
   ends_at timestamp with time zone not null,
   primary key (plan_id, code),
@@ -53,13 +56,17 @@ create index duty_by_person on duty (plan_id, person_code);
 create table finding (
   plan_id bigint not null,
   position integer not null,
+  rule_level varchar(10) not null check (rule_level in ('breach', 'gap', 'strain', 'notice')),
   rule varchar(40) not null,
   amount numeric(24, 9) not null,
+  weighted numeric(24, 9) not null,
   group_code varchar(40),
   says text not null,
   primary key (plan_id, position),
   foreign key (plan_id) references plan (id)
 );
+
+create index finding_by_group on finding (plan_id, group_code);
 
 create table finding_person (
   plan_id bigint not null,

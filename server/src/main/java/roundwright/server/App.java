@@ -1,5 +1,7 @@
 package roundwright.server;
 
+import static roundwright.server.web.Access.Role.ORGANISER;
+import static roundwright.server.web.Access.Role.PERSON;
 import static roundwright.server.web.Access.Role.PUBLIC;
 import static roundwright.server.web.Access.Role.SIGNED_IN;
 import static roundwright.server.web.Route.get;
@@ -18,6 +20,14 @@ import org.eclipse.jetty.server.handler.ErrorHandler;
 import roundwright.server.account.AccountReads;
 import roundwright.server.account.AccountRoutes;
 import roundwright.server.account.AccountWrites;
+import roundwright.server.editions.EditionReads;
+import roundwright.server.editions.EditionRoutes;
+import roundwright.server.event.EventReads;
+import roundwright.server.planning.PlanningReads;
+import roundwright.server.planning.PlanningRoutes;
+import roundwright.server.planning.PlanningWrites;
+import roundwright.server.planning.Search;
+import roundwright.server.planning.SolveRuns;
 import roundwright.server.store.Database;
 import roundwright.server.web.Access;
 import roundwright.server.web.Assets;
@@ -26,19 +36,26 @@ import roundwright.server.web.ErrorPages;
 import roundwright.server.web.Guard;
 import roundwright.server.web.Html;
 import roundwright.server.web.Messages;
+import roundwright.server.web.RateLimit;
 import roundwright.server.web.Route;
 
 /** The running server: its parts put together, and every route it has. */
 public final class App implements AutoCloseable {
   private static final long MOST_BODY_BYTES = 256 * 1024;
 
+  /** A hall of 500 phones may look up at once from behind one address. */
+  private static final double LOOK_UPS_AT_ONCE = 500;
+
+  private static final double LOOK_UPS_PER_SECOND = 5;
+
   private final Settings settings;
   private final Database database;
   private final AccountWrites accountWrites;
+  private final SolveRuns solveRuns;
   private final List<Route> routes;
   private final Javalin javalin;
 
-  private App(Settings settings, Clock clock) {
+  private App(Settings settings, Search search, Clock clock) {
     this.settings = settings;
     this.database =
         Database.open(
@@ -51,6 +68,20 @@ public final class App implements AutoCloseable {
     this.accountWrites = new AccountWrites(database);
     Access access = new Access(accountReads, cookies);
     AccountRoutes account = new AccountRoutes(accountReads, accountWrites, access, html, clock);
+    EditionRoutes edition =
+        new EditionRoutes(
+            new EditionReads(database),
+            html,
+            new RateLimit(clock, LOOK_UPS_AT_ONCE, LOOK_UPS_PER_SECOND));
+    this.solveRuns = new SolveRuns(database, search, EventReads::event);
+    solveRuns.markInterrupted(settings.embedded());
+    PlanningRoutes planning =
+        new PlanningRoutes(
+            new PlanningReads(database),
+            new PlanningWrites(database),
+            solveRuns,
+            html,
+            settings.solveSeconds());
     this.routes =
         List.of(
             get("/", App::front, PUBLIC),
@@ -62,17 +93,30 @@ public final class App implements AutoCloseable {
             post("/sign-in", account::signIn, PUBLIC),
             post("/sign-out", account::signOut, SIGNED_IN),
             get("/events", account::showEvents, SIGNED_IN),
-            get("/link/{token}", account::openLink, PUBLIC));
+            get("/link/{token}", account::openLink, PUBLIC),
+            get("/events/{event}", edition::showEvent, PUBLIC),
+            get("/events/{event}/people/{person}", edition::showFound, PUBLIC),
+            get("/events/{event}/my/{person}", edition::showPocket, PERSON),
+            get("/events/{event}/halls/{hall}", edition::showBoard, PUBLIC),
+            get("/events/{event}/plan", planning::showPlan, ORGANISER),
+            post("/events/{event}/drafts", planning::makeDraft, ORGANISER),
+            get("/events/{event}/solve", planning::showSolve, ORGANISER),
+            post("/events/{event}/solve", planning::solve, ORGANISER),
+            post("/events/{event}/solve/stop", planning::stopSolve, ORGANISER),
+            get("/events/{event}/crews", planning::showCrews, ORGANISER),
+            get("/events/{event}/publish", planning::checkPublish, ORGANISER),
+            post("/events/{event}/publish", planning::publish, ORGANISER));
     this.javalin = Javalin.create(config -> configure(config, access, guard, html));
   }
 
   /**
    * Opens the database and begins to listen.
    *
+   * @param search finds the plans
    * @throws IllegalStateException with a plain sentence where either cannot be done
    */
-  public static App start(Settings settings, Clock clock) {
-    App app = new App(settings, clock);
+  public static App start(Settings settings, Search search, Clock clock) {
+    App app = new App(settings, search, clock);
     try {
       app.javalin.start(settings.host(), settings.port());
     } catch (RuntimeException e) {
@@ -153,6 +197,7 @@ public final class App implements AutoCloseable {
   @Override
   public void close() {
     javalin.stop();
+    solveRuns.close();
     database.close();
   }
 }

@@ -58,6 +58,11 @@ public record Settings(
         + ";DATABASE_TO_LOWER=TRUE;WRITE_DELAY=0;DB_CLOSE_ON_EXIT=FALSE";
   }
 
+  /** True where no other process can have the database open. */
+  public boolean embedded() {
+    return databaseUrl.startsWith("jdbc:h2:");
+  }
+
   /** How browsers reach the server, as far as the settings tell. */
   public Address address() {
     return new Address(host, publicAddress);

@@ -11,6 +11,7 @@ import java.util.stream.Stream;
 import org.junit.jupiter.api.extension.AfterAllCallback;
 import org.junit.jupiter.api.extension.BeforeAllCallback;
 import org.junit.jupiter.api.extension.ExtensionContext;
+import roundwright.server.planning.Search;
 
 /** A real server on a real database file of its own, for all tests of a class. */
 public final class Served implements BeforeAllCallback, AfterAllCallback {
@@ -18,13 +19,23 @@ public final class Served implements BeforeAllCallback, AfterAllCallback {
   public static final String HOST_PASSWORD = "four small copper kettles";
 
   private final TestClock clock = new TestClock();
+  private final Search search;
   private Path folder;
   private App app;
+
+  /** A server whose plans are found at once. */
+  public Served() {
+    this(PlainSearch::plan);
+  }
+
+  public Served(Search search) {
+    this.search = search;
+  }
 
   @Override
   public void beforeAll(ExtensionContext context) throws IOException {
     folder = Files.createTempDirectory("roundwright-test");
-    app = App.start(Settings.local(folder.resolve("database"), 0), clock);
+    app = App.start(Settings.local(folder.resolve("database"), 0), search, clock);
   }
 
   @Override

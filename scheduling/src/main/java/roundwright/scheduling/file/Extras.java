@@ -68,7 +68,16 @@ public final class Extras {
 
   /** A text, number or flag beside a person, as text; empty where there is none. */
   public Optional<String> ofPerson(String person, String key) {
-    JsonNode kept = byPlace.getOrDefault("/people/#" + person, Map.of()).get(key);
+    return plain("/people/#" + person, key);
+  }
+
+  /** The same beside a venue. */
+  public Optional<String> ofVenue(String venue, String key) {
+    return plain("/venues/#" + venue, key);
+  }
+
+  private Optional<String> plain(String place, String key) {
+    JsonNode kept = byPlace.getOrDefault(place, Map.of()).get(key);
     return Optional.ofNullable(kept).filter(JsonNode::isValueNode).map(JsonNode::asText);
   }
 

@@ -76,7 +76,8 @@ public final class AccountReads implements Access.Visitors {
                       EVENT.SLUG,
                       EVENT.NAME,
                       EVENT.ZONE,
-                      organises.as("organises"))
+                      organises.as("organises"),
+                      holdsLink(tx, personCode, linkTokens).as("holds"))
                   .from(selectOne().asTable("asking"))
                   .leftJoin(EVENT)
                   .on(EVENT.SLUG.eq(eventSlug.orElse("")))
@@ -105,32 +106,29 @@ public final class AccountReads implements Access.Visitors {
               account.isPresent()
                   && event.isPresent()
                   && Boolean.TRUE.equals(found.get("organises", Boolean.class));
-          return new Visitor(account, event, organiser, person(tx, event, personCode, linkTokens));
+          Optional<PersonId> person =
+              event.isPresent() && Boolean.TRUE.equals(found.get("holds", Boolean.class))
+                  ? Optional.of(new PersonId(event.get().id(), personCode.orElseThrow()))
+                  : Optional.empty();
+          return new Visitor(account, event, organiser, person);
         });
   }
 
-  private static Optional<PersonId> person(
-      Tx tx,
-      Optional<Visitor.EventName> event,
-      Optional<String> personCode,
-      List<String> linkTokens) {
-    if (event.isEmpty() || personCode.isEmpty() || linkTokens.isEmpty()) {
-      return Optional.empty();
+  /** Whether the browser holds a good personal link of the person in the path. */
+  private static Field<Boolean> holdsLink(
+      Tx tx, Optional<String> personCode, List<String> linkTokens) {
+    if (personCode.isEmpty() || linkTokens.isEmpty()) {
+      return inline(false);
     }
-    PersonId person = new PersonId(event.get().id(), personCode.get());
-    boolean held =
-        tx.sql()
-            .fetchExists(
-                tx.sql()
-                    .select(inline(1))
-                    .from(PERSONAL_LINK)
-                    .where(PERSONAL_LINK.EVENT_ID.eq(person.event().number()))
-                    .and(PERSONAL_LINK.PERSON_CODE.eq(person.code()))
-                    .and(
-                        PERSONAL_LINK.TOKEN_HASH.in(linkTokens.stream().map(Tokens::hash).toList()))
-                    .and(PERSONAL_LINK.REVOKED_AT.isNull())
-                    .and(PERSONAL_LINK.ENDS_AT.gt(tx.now())));
-    return held ? Optional.of(person) : Optional.empty();
+    return field(
+        exists(
+            selectOne()
+                .from(PERSONAL_LINK)
+                .where(PERSONAL_LINK.EVENT_ID.eq(EVENT.ID))
+                .and(PERSONAL_LINK.PERSON_CODE.eq(personCode.get()))
+                .and(PERSONAL_LINK.TOKEN_HASH.in(linkTokens.stream().map(Tokens::hash).toList()))
+                .and(PERSONAL_LINK.REVOKED_AT.isNull())
+                .and(PERSONAL_LINK.ENDS_AT.gt(tx.now()))));
   }
 
   Optional<Credentials> credentials(String name) {

@@ -11,6 +11,7 @@ import picocli.CommandLine.Command;
 import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Spec;
+import roundwright.scheduling.Planner;
 import roundwright.server.App;
 import roundwright.server.Settings;
 
@@ -70,7 +71,7 @@ final class ServeCommand implements Callable<Integer> {
             devRoot == null ? Optional.empty() : Optional.of(devRoot.toRealPath()),
             5,
             600);
-    App app = App.start(settings, Clock.systemUTC());
+    App app = App.start(settings, Planner::plan, Clock.systemUTC());
     spec.commandLine().getOut().println("Serving on " + app.url("/"));
     app.firstSetUpLink()
         .ifPresent(

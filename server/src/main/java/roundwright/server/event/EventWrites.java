@@ -53,6 +53,7 @@ import roundwright.server.store.Tx;
 import roundwright.server.store.schema.tables.records.PersonRecord;
 import roundwright.server.store.schema.tables.records.PinRecord;
 import roundwright.server.store.schema.tables.records.RoundRecord;
+import roundwright.server.ticket.NameFold;
 
 /** Brings events in; each in one transaction. */
 public final class EventWrites {
@@ -66,19 +67,27 @@ public final class EventWrites {
 
   /**
    * Adds an event from its file. Of the file's own keys, {@code x-listed}, {@code x-minor} and
-   * {@code x-public-name} of a person say what strangers may see; all are kept for the export.
+   * {@code x-public-name} of a person say what strangers may see, {@code x-address} is a venue's;
+   * all are kept for the export.
    *
    * @param slug the event's name in addresses
    * @throws IllegalArgumentException where the slug is taken or a name is too long to keep
    */
   public EventId importEvent(String slug, EventFile file) {
-    checkLengths(file.event());
+    checkLengths(file.event(), file.extras());
     return database.write(tx -> new Import(tx, slug, file).run());
   }
 
-  private static void checkLengths(Event event) {
+  private static void checkLengths(Event event, Extras extras) {
     checkLength("The event's name", event.name());
     event.venues().forEach(venue -> checkLength("venue " + venue.id(), venue.name()));
+    event
+        .venues()
+        .forEach(
+            venue ->
+                extras
+                    .ofVenue(venue.id(), "x-address")
+                    .ifPresent(address -> checkLength("address of " + venue.id(), address)));
     event.venues().stream()
         .flatMap(venue -> venue.halls().stream())
         .forEach(hall -> checkLength("hall " + hall.id(), hall.name()));
@@ -176,6 +185,7 @@ public final class EventWrites {
             .setCode(venue.id())
             .setPosition(position++)
             .setName(venue.name())
+            .setAddress(file.extras().ofVenue(venue.id(), "x-address").orElse(null))
             .setZone(venue.zone().getId());
       }
       for (Venue venue : event.venues()) {
@@ -282,7 +292,7 @@ public final class EventWrites {
       PersonRecord row = row(PERSON);
       row.setEventId(eventId).setCode(person.id()).setPosition(position).setName(person.name());
       row.setPublicName(publicName.orElse(null)).setShownName(shown);
-      row.setFoldedName(ShownName.folded(shown)).setListed(listed).setMinor(minor);
+      row.setFoldedName(NameFold.of(shown)).setListed(listed).setMinor(minor);
       row.setJudges(person.crew().judges()).setRuns(person.crew().runs());
       row.setAvailabilityGiven(person.available().isPresent());
       row.setHousehold(person.household().orElse(null)).setNewcomer(person.newcomer());

@@ -1,9 +1,7 @@
 package roundwright.server.event;
 
 import java.lang.Character.UnicodeScript;
-import java.text.Normalizer;
 import java.util.EnumSet;
-import java.util.Locale;
 import java.util.Optional;
 import java.util.Set;
 
@@ -36,34 +34,5 @@ public final class ShownName {
     String last = parts[parts.length - 1];
     boolean unspaced = parts.length == 1 && last.codePointCount(0, last.length()) > 1;
     return unspaced ? last.substring(last.offsetByCodePoints(0, 1)) : last;
-  }
-
-  /**
-   * A name without case, accents and what else separates ways of typing it, for looking up: İ, Ł
-   * and ø are found by i, l and o.
-   */
-  public static String folded(String name) {
-    String apart = Normalizer.normalize(name, Normalizer.Form.NFKD).toLowerCase(Locale.ROOT);
-    StringBuilder folded = new StringBuilder(apart.length());
-    apart
-        .codePoints()
-        .filter(letter -> Character.getType(letter) != Character.NON_SPACING_MARK)
-        .forEach(letter -> folded.append(plain(letter)));
-    return Normalizer.normalize(folded, Normalizer.Form.NFKC).strip();
-  }
-
-  private static String plain(int letter) {
-    return switch (letter) {
-      case 'ı' -> "i";
-      case 'ł' -> "l";
-      case 'ø' -> "o";
-      case 'đ', 'ð' -> "d";
-      case 'ħ' -> "h";
-      case 'ß' -> "ss";
-      case 'æ' -> "ae";
-      case 'œ' -> "oe";
-      case 'þ' -> "th";
-      default -> Character.toString(letter);
-    };
   }
 }

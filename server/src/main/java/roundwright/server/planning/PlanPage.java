@@ -12,6 +12,7 @@ import roundwright.server.web.Ticket;
 /**
  * The day plan of a draft: lanes of tickets, what a rule has to say, the search, one group's crew.
  *
+ * @param drafts all of the event's, the newest first
  * @param score empty where nothing is planned yet
  * @param findings the worst first, at most as many as a page can show
  * @param moreFindings how many are left out
@@ -19,6 +20,7 @@ import roundwright.server.web.Ticket;
 public record PlanPage(
     EventMark event,
     DraftMark draft,
+    List<DraftMark> drafts,
     LocalDate day,
     Lanes lanes,
     Optional<Score> score,
@@ -26,7 +28,32 @@ public record PlanPage(
     int moreFindings,
     SolvePanel solve) {
   public PlanPage {
+    drafts = List.copyOf(drafts);
     findings = List.copyOf(findings);
+  }
+
+  /** The same page with a search that could not be had, and why. */
+  PlanPage withTrouble(String trouble) {
+    return new PlanPage(
+        event,
+        draft,
+        drafts,
+        day,
+        lanes,
+        score,
+        findings,
+        moreFindings,
+        new SolvePanel(
+            solve.state,
+            solve.run,
+            solve.seed,
+            solve.elapsedSeconds,
+            solve.wantedSeconds,
+            solve.stage,
+            solve.first,
+            solve.best,
+            solve.stillWrong,
+            trouble));
   }
 
   /**
@@ -67,7 +94,7 @@ public record PlanPage(
    *     refused
    * @param run its id, 0 before the first
    * @param stage the engine's word for what it is doing, empty where unknown
-   * @param stillWrong one sentence a line, the worst first
+   * @param stillWrong words of the rules that the best plan breaks or leaves gaps in
    * @param trouble why it was refused or interrupted, as the end of a sentence's key; else empty
    */
   public record SolvePanel(

@@ -8,6 +8,7 @@ import io.javalin.http.MethodNotAllowedResponse;
 import java.util.Set;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
+import roundwright.server.store.StaleVersion;
 
 /**
  * The pages that say what went wrong, with a reference under which the server's log tells the rest;
@@ -21,15 +22,6 @@ public final class ErrorPages {
 
   public ErrorPages(Html html) {
     this.html = html;
-  }
-
-  /** Somebody else changed the same thing meanwhile. */
-  public static final class StaleVersion extends RuntimeException {
-    private static final long serialVersionUID = 1;
-
-    public StaleVersion(String what) {
-      super(what + " was changed by somebody else meanwhile; load it again");
-    }
   }
 
   public void register(RoutesConfig routes) {

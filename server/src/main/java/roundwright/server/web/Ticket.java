@@ -70,6 +70,42 @@ public record Ticket(
     }
   }
 
+  /** The same ticket with what rules found against its group. */
+  public Ticket withFound(long foundBreaches, long foundGaps) {
+    return copy(state, foundBreaches, foundGaps, joins);
+  }
+
+  /** The same ticket in another state. */
+  public Ticket in(State other) {
+    return copy(other, breaches, gaps, joins);
+  }
+
+  /** The same ticket, joined to the next one of its round. */
+  public Ticket joining() {
+    return copy(state, breaches, gaps, true);
+  }
+
+  private Ticket copy(State other, long foundBreaches, long foundGaps, boolean joined) {
+    return new Ticket(
+        group,
+        hall,
+        discipline,
+        round,
+        finalRound,
+        number,
+        lastNumber,
+        groups,
+        start,
+        end,
+        other,
+        competitors,
+        crew,
+        foundBreaches,
+        foundGaps,
+        joined,
+        pinned);
+  }
+
   public long minutes() {
     return Duration.between(start, end).toMinutes();
   }

@@ -23,6 +23,7 @@ import roundwright.scheduling.model.Event;
 import roundwright.server.Settings;
 import roundwright.server.ids.EventId;
 import roundwright.server.store.Database;
+import roundwright.server.ticket.NameFold;
 
 class EventRoundTripTest {
   private static final Path EVERY_KEY =
@@ -147,7 +148,7 @@ class EventRoundTripTest {
     "Straße,strasse"
   })
   void a_name_is_found_without_its_accents(String name, String folded) {
-    assertEquals(folded, ShownName.folded(name));
+    assertEquals(folded, NameFold.of(name));
   }
 
   @Test
@@ -155,7 +156,7 @@ class EventRoundTripTest {
       throws IOException, FileProblems {
     List<String> empty =
         EventFile.read(DEMO).event().people().stream()
-            .map(person -> ShownName.folded(person.name()))
+            .map(person -> NameFold.of(person.name()))
             .filter(String::isBlank)
             .toList();
     assertEquals(List.of(), empty);

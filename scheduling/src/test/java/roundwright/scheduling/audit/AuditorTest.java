@@ -28,7 +28,7 @@ import roundwright.scheduling.model.Plan;
 
 /** What holds for every verdict. */
 final class AuditorTest {
-  private static final int SEEDS = 300;
+  private static final int SEEDS = 120;
   private static final BigDecimal A_MILLIONTH = new BigDecimal("0.000001");
 
   private static Verdict verdict(Event event, long seed) {

@@ -106,7 +106,7 @@ public final class Pace {
       int active,
       int scramblers,
       int runners) {
-    long grids = slots(workInAllMicros, Math.max(1, active));
+    long grids = Math.max(1, slots(workInAllMicros, Math.max(1, active)));
     grids = Math.max(grids, slots(longestPathMicros, 1));
     if (scramblers > 0) {
       grids = Math.max(grids, slots(attemptsInAll * scrambleMicros[round], scramblers));

@@ -25,7 +25,8 @@ public final class Arrangement implements Comparable<Arrangement> {
     this.placePerson = placePerson;
   }
 
-  static Arrangement of(Ledger ledger) {
+  /** What a ledger's board stands at, with its price. */
+  public static Arrangement of(Ledger ledger) {
     return new Arrangement(
         ledger.frame,
         ledger.hard(),

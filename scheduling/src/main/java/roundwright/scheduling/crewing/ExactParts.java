@@ -18,6 +18,7 @@ import roundwright.scheduling.rules.Ledger;
  */
 final class ExactParts {
   private static final long FILLED = 1L << 40;
+  private static final long EMPTY_BREACHES = 50;
   private static final long UNIT = 1_000_000L;
 
   private final Ledger ledger;
@@ -236,7 +237,7 @@ final class ExactParts {
       }
     }
     if (rows > 0) {
-      costs[0] -= FILLED;
+      costs[0] -= EMPTY_BREACHES * Ledger.BREACH_IN_TRIALS;
     }
     return costs;
   }

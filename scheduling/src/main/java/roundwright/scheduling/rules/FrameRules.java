@@ -48,13 +48,25 @@ final class FrameRules {
       int[] latestEnd = new int[frame.problem.halls];
       Arrays.fill(latestEnd, Problem.NEVER);
       long found = 0;
-      for (int g = 0; g < frame.groups; g++) {
+      for (int g : inOrderOfStart(frame)) {
         int hall = frame.hall[g];
         found += Weights.startedFives(latestEnd[hall] + setup - frame.start[g]);
         latestEnd[hall] = Math.max(latestEnd[hall], frame.end[g]);
       }
       return found;
     }
+  }
+
+  /** Groups by start, then hall, then number; the frame's own order puts the end before both. */
+  private static int[] inOrderOfStart(Frame frame) {
+    return IntStream.range(0, frame.groups)
+        .boxed()
+        .sorted(
+            Comparator.comparingInt((Integer g) -> frame.start[g])
+                .thenComparingInt(g -> frame.hall[g])
+                .thenComparingInt(g -> frame.number[g]))
+        .mapToInt(Integer::intValue)
+        .toArray();
   }
 
   /** A group's minutes while its hall is closed or kept by a fixed point. */
@@ -213,7 +225,8 @@ final class FrameRules {
       for (Pins.CompetitorPin pin : pins.competitors()) {
         int round = problem.round(pin.round());
         int seat = problem.seatOf(problem.person(pin.person()), round);
-        moved += seat < 0 || frame.seatPin[seat] != frame.group(round, pin.number()) ? 1 : 0;
+        int group = frame.group(round, pin.number());
+        moved += seat < 0 || group < 0 || frame.seatPin[seat] != group ? 1 : 0;
       }
       for (Pins.DutyPin pin : pins.duties()) {
         moved += frame.group(problem.round(pin.round()), pin.number()) < 0 ? 1 : 0;
@@ -262,11 +275,7 @@ final class FrameRules {
     @Override
     public long price(Frame frame) {
       Map<Long, int[]> spans = new HashMap<>();
-      for (int g :
-          IntStream.range(0, frame.groups)
-              .boxed()
-              .sorted(Comparator.comparingInt(g -> frame.start[g]))
-              .toList()) {
+      for (int g : inOrderOfStart(frame)) {
         long venueDay = ((long) frame.problem.hallVenue[frame.hall[g]] << 32) + frame.date[g];
         int[] span =
             spans.computeIfAbsent(venueDay, first -> new int[] {frame.start[g], frame.end[g]});

@@ -10,7 +10,7 @@ final class GroupRules {
   private GroupRules() {}
 
   static List<GroupRule> breaches() {
-    return List.of(new Oversize(), new TooShort());
+    return List.of(new Peopled(), new Oversize(), new TooShort());
   }
 
   static GroupRule gaps() {
@@ -22,6 +22,21 @@ final class GroupRules {
         new UnevenGroups(Weights.millionths(problem, RuleName.UNEVEN_GROUPS)),
         new SpareCrew(Weights.millionths(problem, RuleName.SPARE_CREW)),
         new Kin(Weights.millionths(problem, RuleName.KIN)));
+  }
+
+  /** A group without competitors is none: so dear that the search leaves no such group behind. */
+  record Peopled() implements GroupRule {
+    static final long EMPTY = 50;
+
+    @Override
+    public RuleName name() {
+      return RuleName.WRONG_COUNT;
+    }
+
+    @Override
+    public long price(GroupRow row) {
+      return row.size == 0 ? EMPTY : 0;
+    }
   }
 
   /** People beyond what the stations in use may hold, and stations beyond what there are. */

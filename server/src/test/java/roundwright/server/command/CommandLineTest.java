@@ -1,0 +1,313 @@
+package roundwright.server.command;
+
+import static org.junit.jupiter.api.Assertions.assertArrayEquals;
+import static org.junit.jupiter.api.Assertions.assertEquals;
+import static org.junit.jupiter.api.Assertions.assertFalse;
+import static org.junit.jupiter.api.Assertions.assertTrue;
+
+import java.io.IOException;
+import java.io.PrintWriter;
+import java.io.StringWriter;
+import java.math.BigDecimal;
+import java.nio.file.Files;
+import java.nio.file.Path;
+import java.util.List;
+import org.junit.jupiter.api.Test;
+import org.junit.jupiter.api.io.TempDir;
+import org.junit.jupiter.params.ParameterizedTest;
+import org.junit.jupiter.params.provider.ValueSource;
+import picocli.CommandLine;
+import roundwright.scheduling.Progress;
+import roundwright.scheduling.cost.Cost;
+
+/** The commands as somebody types them, run in this process with their output caught. */
+final class CommandLineTest {
+  private static final String EVENT =
+      """
+      {
+        "format": "roundwright-event/1", "name": "Evening", "zone": "Europe/Lisbon",
+        "venues": [{"id": "v", "name": "House", "halls": [{
+          "id": "h", "name": "Main Hall", "stations": 4,
+          "open": [{"from": "2027-05-08T09:00", "to": "2027-05-08T18:00"}]}]}],
+        "disciplines": [{"id": "cube3", "name": "3x3x3"}],
+        "rounds": [{"id": "a", "discipline": "cube3", "number": 1, "countedBy": "average-of-5",
+          "crew": {"judges": 1, "scramblers": 1, "runners": 0}}],
+        "people": [
+          {"id": "p1", "name": "Ada", "entries": [{"discipline": "cube3", "expectedSeconds": 20}]},
+          {"id": "p2", "name": "Ben", "entries": [{"discipline": "cube3", "expectedSeconds": 25}]},
+          {"id": "p3", "name": "Cy", "crew": {"judges": true}},
+          {"id": "p4", "name": "Di", "crew": {"scrambles": ["cube3"]}}
+        ]
+      }
+      """;
+  private static final String PLAN =
+      """
+      {
+        "format": "roundwright-plan/1",
+        "groups": [{"id": "g", "round": "a", "number": 1, "hall": "h", "stations": 2,
+          "start": "2027-05-08T09:00", "end": "2027-05-08T09:15", "competitors": ["p1", "p2"],
+          "crew": {"judges": ["p3"], "scramblers": ["p4"], "runners": []}}]
+      }
+      """;
+
+  @TempDir private Path folder;
+
+  /** What a command said and ended with. */
+  private record Outcome(int code, String out, String err) {}
+
+  private Outcome run(Object... arguments) {
+    StringWriter out = new StringWriter();
+    StringWriter err = new StringWriter();
+    CommandLine line = Roundwright.commandLine();
+    line.setOut(new PrintWriter(out));
+    line.setErr(new PrintWriter(err));
+    String[] texts = new String[arguments.length];
+    for (int i = 0; i < texts.length; i++) {
+      texts[i] = arguments[i].toString();
+    }
+    int code = line.execute(texts);
+    return new Outcome(code, out.toString(), err.toString());
+  }
+
+  private Path file(String name, String text) throws IOException {
+    return Files.writeString(folder.resolve(name), text);
+  }
+
+  private static String without(String text, String part) {
+    assertTrue(text.contains(part), part);
+    return text.replace(part, "");
+  }
+
+  @Test
+  void a_plan_is_written_and_checks_clean() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = folder.resolve("plan.json");
+    Outcome planned = run("plan", event, "--out", plan, "--steps", 2000);
+    assertEquals("", planned.err());
+    assertEquals(0, planned.code(), planned.out());
+    assertTrue(planned.out().contains("Wrote " + plan + ": 1 groups, 0 breaches, 0 gaps, strain"));
+    Outcome checked = run("check", event, plan);
+    assertEquals(0, checked.code(), checked.out());
+    assertTrue(checked.out().startsWith("0 breaches, 0 gaps, strain "));
+  }
+
+  @Test
+  void the_same_seed_and_steps_give_the_same_bytes() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path one = folder.resolve("one.json");
+    Path two = folder.resolve("two.json");
+    run("plan", event, "--out", one, "--steps", 3000, "--seed", 7);
+    run("plan", event, "--out", two, "--steps", 3000, "--seed", 7);
+    assertArrayEquals(Files.readAllBytes(one), Files.readAllBytes(two));
+  }
+
+  @Test
+  void a_plan_with_gaps_is_written_and_told_by_its_exit_code() throws IOException {
+    Path event = file("event.json", without(EVENT, ", \"crew\": {\"scrambles\": [\"cube3\"]}"));
+    Path plan = folder.resolve("plan.json");
+    Outcome planned = run("plan", event, "--out", plan, "--seconds", 0.5);
+    assertEquals(3, planned.code(), planned.err());
+    assertTrue(planned.out().contains("Still wrong: unfilled 1."), planned.out());
+    assertTrue(Files.exists(plan));
+    assertEquals(0, run("check", event, plan).code());
+  }
+
+  @Test
+  void a_file_with_three_mistakes_gives_three_lines_and_plans_nothing() throws IOException {
+    Path event =
+        file(
+            "event.json",
+            EVENT
+                .replace("\"stations\": 4", "\"stations\": 0")
+                .replace("\"number\": 1", "\"number\": 2")
+                .replace("\"judges\": true", "\"judges\": 1"));
+    Outcome planned = run("plan", event, "--out", folder.resolve("plan.json"));
+    assertEquals(2, planned.code());
+    assertEquals("", planned.out());
+    List<String> lines = planned.err().lines().toList();
+    assertEquals(3, lines.size(), planned.err());
+    assertEquals(
+        "roundwright: "
+            + event
+            + ": venues[0].halls[0].stations (h) is 0; write a whole number from 1 to 500",
+        lines.get(0));
+    assertFalse(Files.exists(folder.resolve("plan.json")));
+  }
+
+  @Test
+  void the_figures_as_json_are_one_line() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = file("plan.json", PLAN);
+    // load: two duties of 15 minutes, 1 each, at 0.5; waiting: 4 people x 1/4 hour at 4;
+    // late-finish 15 at 1
+    String figures =
+        "{\"breaches\":{},\"gaps\":0,\"strain\":20.0,"
+            + "\"byRule\":{\"load\":1.0,\"waiting\":4.0,\"late-finish\":15.0}}";
+    Outcome checked = run("check", event, plan, "--json");
+    assertEquals(figures + System.lineSeparator(), checked.out());
+    assertEquals(0, checked.code());
+    Path late = file("late.json", PLAN.replace("09:00", "08:50").replace("[\"p3\"]", "[]"));
+    checked = run("check", event, late, "--json");
+    assertTrue(
+        checked.out().startsWith("{\"breaches\":{\"hall-closed\":2},\"gaps\":1,"), checked.out());
+    assertEquals(1, checked.code());
+  }
+
+  @Test
+  void a_kept_plan_and_a_moment_count_as_the_page_says() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path kept = file("kept.json", PLAN);
+    Path plan = file("plan.json", PLAN.replace("09:00", "09:10").replace("09:15", "09:25"));
+    Outcome checked = run("check", event, plan, "--kept", kept, "--json");
+    // four people, one commitment each: changed 4 x 15, told 4 x 30
+    assertTrue(checked.out().contains("\"changed\":60.0,\"told\":120.0"), checked.out());
+    assertEquals(0, checked.code());
+    checked = run("check", event, plan, "--kept", kept, "--at", "2027-05-08T09:05", "--json");
+    assertTrue(checked.out().startsWith("{\"breaches\":{\"past-changed\":4}"), checked.out());
+    assertEquals(1, checked.code());
+  }
+
+  @Test
+  void a_check_for_people_names_rules_people_and_amounts() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = file("plan.json", PLAN.replace("[\"p1\", \"p2\"]", "[\"p1\"]"));
+    Outcome checked = run("check", event, plan);
+    assertEquals(1, checked.code());
+    assertTrue(checked.out().contains("  entry-missing 3\n"), checked.out());
+    assertTrue(checked.out().contains("    Ben is in no group of 3x3x3 round 1.\n"));
+    assertTrue(checked.out().contains("  waiting"));
+  }
+
+  @Test
+  void a_forecast_is_a_table_of_rounds() throws IOException {
+    Outcome forecast = run("forecast", file("event.json", EVENT));
+    assertEquals(0, forecast.code());
+    // path 5 x (25 + 45 + 25) = 475 s x 1.2 = 570 s: 10 minutes on two stations
+    assertTrue(
+        forecast
+            .out()
+            .contains("3x3x3 round 1                     2       1         2        10       10"),
+        forecast.out());
+  }
+
+  @Test
+  void wrong_files_are_refused_on_one_line_each_with_what_to_do() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = file("plan.json", PLAN);
+    Path missing = folder.resolve("none.json");
+    Path nowhere = folder.resolve("no").resolve("plan.json");
+    assertRefused(
+        missing + ": there is no such file; check its name and folder",
+        run("plan", missing, "--out", plan));
+    assertRefused(folder + ": is a folder; name a file in it", run("check", event, folder));
+    assertRefused(
+        folder + ": is a folder; name a file in it with --out",
+        run("plan", event, "--out", folder));
+    assertRefused(
+        nowhere + ": there is no folder " + nowhere.getParent() + "; make it first",
+        run("plan", event, "--out", nowhere));
+    Outcome swapped = run("check", plan, event);
+    assertEquals(2, swapped.code());
+    assertRefused(
+        plan + ": format is \"roundwright-plan/1\"; only \"roundwright-event/1\" is read here",
+        swapped.err().lines().findFirst().orElseThrow());
+    assertRefused(
+        "--at says when the plan was kept; name that plan with --kept",
+        run("check", event, plan, "--at", "2027-05-08T09:00"));
+    assertRefused(
+        "--at is \"nine\"; write a local date and time in whole minutes, without offset,"
+            + " such as 2027-05-08T09:00",
+        run("check", event, file("p.json", PLAN), "--kept", file("k.json", PLAN), "--at", "nine"));
+  }
+
+  private static void assertRefused(String message, Outcome outcome) {
+    assertEquals(2, outcome.code());
+    assertRefused(message, outcome.err().strip());
+  }
+
+  private static void assertRefused(String message, String line) {
+    assertEquals("roundwright: " + message, line);
+  }
+
+  @Test
+  void wrong_arguments_are_refused_on_one_line_with_where_to_look() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = folder.resolve("plan.json");
+    assertRefused(
+        "Missing required option: '--out=PLAN.json'. Try: roundwright plan --help",
+        run("plan", event));
+    assertRefused("Unmatched argument at index 0: 'plann'. Try: roundwright --help", run("plann"));
+    assertRefused("--steps is 0; give 1 or more", run("plan", event, "--out", plan, "--steps", 0));
+    assertRefused(
+        "--threads is 0; give 1 to 64", run("plan", event, "--out", plan, "--threads", 0));
+    assertRefused(
+        "--seconds is -1.0; give more than 0, at most 86400",
+        run("plan", event, "--out", plan, "--seconds=-1"));
+    assertFalse(Files.exists(plan));
+  }
+
+  @ParameterizedTest
+  @ValueSource(strings = {"", "plan", "check", "forecast", "serve"})
+  void each_command_helps_and_ends_well(String command) {
+    Outcome help = command.isEmpty() ? run("--help") : run(command, "--help");
+    assertEquals(0, help.code());
+    assertTrue(help.out().contains("Usage: roundwright " + command), help.out());
+    assertTrue(help.out().lines().allMatch(line -> line.length() <= 80), help.out());
+  }
+
+  @Test
+  void the_version_is_told_and_no_command_at_all_gets_help() {
+    assertEquals("Roundwright 0.1.0" + System.lineSeparator(), run("--version").out());
+    Outcome nothing = run();
+    assertEquals(2, nothing.code());
+    assertTrue(nothing.err().contains("Commands:"));
+  }
+
+  private static Progress.Report report(double seconds, String strain, String... wrong) {
+    return new Progress.Report(
+        Progress.Stage.FIRST_PLAN,
+        new Cost(wrong.length, 0, new BigDecimal(strain)),
+        seconds,
+        10,
+        List.of(wrong));
+  }
+
+  @Test
+  void a_terminal_sees_one_line_written_again() {
+    StringWriter out = new StringWriter();
+    ProgressLines lines = new ProgressLines(new PrintWriter(out), true);
+    lines.report(report(0.1, "1234.56", "two-places"));
+    lines.report(report(0.2, "7"));
+    lines.finish();
+    String first =
+        "   0.1 s  first plan  1 breaches, 0 gaps, strain 1234.6; still wrong: two-places";
+    String second = "   0.2 s  first plan  0 breaches, 0 gaps, strain 7.0";
+    String blanks = " ".repeat(first.length() - second.length());
+    assertEquals(
+        "\r" + first + "\r" + second + blanks + "\r" + " ".repeat(second.length()) + "\r",
+        out.toString());
+  }
+
+  @Test
+  void a_pipe_sees_plain_lines_now_and_then() {
+    StringWriter out = new StringWriter();
+    ProgressLines lines = new ProgressLines(new PrintWriter(out), false);
+    lines.report(report(0.1, "9"));
+    lines.report(report(1.9, "8"));
+    lines.report(report(2.2, "7"));
+    lines.finish();
+    assertEquals(
+        List.of(
+            "   0.1 s  first plan  0 breaches, 0 gaps, strain 9.0",
+            "   2.2 s  first plan  0 breaches, 0 gaps, strain 7.0"),
+        out.toString().lines().toList());
+  }
+
+  @Test
+  void a_search_stops_when_asked_to() {
+    ProgressLines lines = new ProgressLines(new PrintWriter(new StringWriter()), false);
+    assertFalse(lines.stopWanted());
+    lines.stop();
+    assertTrue(lines.stopWanted());
+  }
+}

@@ -175,6 +175,11 @@ public final class App implements AutoCloseable {
     return database;
   }
 
+  /** Where searches are asked for. */
+  public SolveRuns solveRuns() {
+    return solveRuns;
+  }
+
   public int port() {
     return javalin.port();
   }

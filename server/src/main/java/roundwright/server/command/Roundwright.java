@@ -20,12 +20,13 @@ import picocli.CommandLine.Spec;
       PlanCommand.class,
       CheckCommand.class,
       ForecastCommand.class,
-      ServeCommand.class
+      ServeCommand.class,
+      DemoCommand.class
     },
     footer = {
       "",
       "Each command tells more: roundwright plan --help",
-      "A first look: roundwright plan demo-event/event.json --out plan.json"
+      "A first look: roundwright demo"
     })
 public final class Roundwright implements Callable<Integer> {
   /** What a command ends with where a file or the command line itself is wrong. */

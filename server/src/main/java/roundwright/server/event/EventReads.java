@@ -58,6 +58,7 @@ import roundwright.server.store.schema.tables.records.HallRecord;
 import roundwright.server.store.schema.tables.records.PersonRecord;
 import roundwright.server.store.schema.tables.records.PinRecord;
 import roundwright.server.store.schema.tables.records.RoundRecord;
+import roundwright.server.web.Visitor.EventName;
 
 /** Reads an event back as the engine's records: one query a table, whatever the event's size. */
 public final class EventReads {
@@ -70,6 +71,16 @@ public final class EventReads {
    */
   public static Event event(Tx tx, EventId id) {
     return new Reading(tx.sql(), id.number()).event();
+  }
+
+  /** The event of a name in addresses. */
+  public static Optional<EventName> named(Tx tx, String slug) {
+    return tx.sql()
+        .fetchOptional(EVENT, EVENT.SLUG.eq(slug))
+        .map(
+            row ->
+                new EventName(
+                    new EventId(row.getId()), slug, row.getName(), ZoneId.of(row.getZone())));
   }
 
   /** The event with the file's own keys, as it would be written to a file. */

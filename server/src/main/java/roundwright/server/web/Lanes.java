@@ -43,6 +43,16 @@ public record Lanes(LocalDate day, int fromHour, int hours, String utc, List<Ven
         .toList();
   }
 
+  /** The fixed points of the day, each once, in order of time. */
+  public List<FixedBlock> fixedPoints() {
+    return venues.stream()
+        .flatMap(venue -> venue.lanes().stream())
+        .flatMap(lane -> lane.fixedPoints().stream())
+        .distinct()
+        .sorted(java.util.Comparator.comparing(FixedBlock::from))
+        .toList();
+  }
+
   public List<HallMark> halls() {
     return venues.stream().flatMap(venue -> venue.lanes().stream()).map(Lane::hall).toList();
   }

@@ -122,6 +122,11 @@ public final class Wording {
   }
 
   /** A sentence whose key is only known when the page is made. */
+  public String say(String key) {
+    return messages.say(locale, key);
+  }
+
+  /** The same with places to fill. */
   public String say(String key, Object... filled) {
     return messages.say(locale, key, filled);
   }

@@ -83,25 +83,23 @@ public record BoardNames(List<String> names, int columns, int left) {
   }
 
   /**
-   * Letters as wide as Latin ones; ideographs and syllable blocks count twice, marks not at all.
+   * How wide a text is, in Latin letters. Other alphabets come from a face that cannot be narrowed,
+   * ideographs and syllable blocks are wider still, marks take no room.
    */
   static int width(String text) {
-    return text.codePoints()
-        .map(
-            letter ->
-                switch (Character.getType(letter)) {
-                  case Character.NON_SPACING_MARK, Character.ENCLOSING_MARK -> 0;
-                  default ->
-                      Character.isIdeographic(letter)
-                              || Character.UnicodeScript.of(letter)
-                                  == Character.UnicodeScript.HANGUL
-                              || Character.UnicodeScript.of(letter)
-                                  == Character.UnicodeScript.HIRAGANA
-                              || Character.UnicodeScript.of(letter)
-                                  == Character.UnicodeScript.KATAKANA
-                          ? 2
-                          : 1;
-                })
-        .sum();
+    int tenths = text.codePoints().map(BoardNames::tenths).sum();
+    return (tenths + 9) / 10;
+  }
+
+  private static int tenths(int letter) {
+    int type = Character.getType(letter);
+    if (type == Character.NON_SPACING_MARK || type == Character.ENCLOSING_MARK) {
+      return 0;
+    }
+    return switch (Character.UnicodeScript.of(letter)) {
+      case LATIN, COMMON, INHERITED -> 10;
+      case HAN, HANGUL, HIRAGANA, KATAKANA -> 22;
+      default -> 15;
+    };
   }
 }

@@ -18,7 +18,9 @@ class BoardNamesTest {
     "Nguyễn Thị Thảo Nguyên, 14, Nguyễn Thị T.",
     "Maximiliana-Wilhelmina Hohenlindenbaum von Rabensteiner, 14, Maximiliana H.",
     "Ai, 9, Ai",
-    "風早川 つむぎ, 9, 風早川 つ.",
+    "Десислав Росенова, 9, Десислав",
+    "Десислав Росенова, 14, Десислав",
+    "風早川 つむぎ, 9, 風早川",
     "Wolfgangsiegbertreinhold, 9, Wolfgangs",
   })
   void aLongNameKeepsItsLeadingPartsAndAnInitial(String name, int letters, String fitted) {

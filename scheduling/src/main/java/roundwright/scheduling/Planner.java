@@ -39,6 +39,7 @@ public final class Planner {
   private static final double MOST_LAYOUTS = 1_000_000;
   private static final double FIRST_DAY_PLAN_PART = 0.15;
   private static final double DAY_PLAN_PART = 0.03;
+  private static final double DAY_PLAN_POLISH_PART = 0.04;
   private static final double DAY_PLANS_UNTIL = 0.3;
   private static final double DAY_PLANS_UNTIL_IF_BROKEN = 0.6;
   private static final double POLISH_AT = 0.97;
@@ -95,7 +96,9 @@ public final class Planner {
       Crewing crewing = new Crewing(frame, book, dice);
       crewing.firstPlan(best == null ? spending::overdue : spending::over);
       if (attempt > 0) {
-        crewing.polish(spending::over);
+        double before = spending.usedTime();
+        crewing.polish(
+            () -> spending.over() || spending.usedTime() - before > DAY_PLAN_POLISH_PART);
       }
       Arrangement found = crewing.arrangement();
       if (found.hard > 0) {

@@ -17,6 +17,7 @@ public final class PersonRow {
   public int[] end = new int[FIRST_LENGTH];
   public int[] hall = new int[FIRST_LENGTH];
   public int[] date = new int[FIRST_LENGTH];
+  private boolean[] first = new boolean[FIRST_LENGTH];
   public Board board;
 
   public void load(Board from, int wantedPerson) {
@@ -37,6 +38,7 @@ public final class PersonRow {
       end[i] = frame.end[g];
       hall[i] = frame.hall[g];
       date[i] = frame.date[g];
+      first[i] = noneBeforeOfDate(i);
     }
   }
 
@@ -48,6 +50,7 @@ public final class PersonRow {
     end = new int[length];
     hall = new int[length];
     date = new int[length];
+    first = new boolean[length];
   }
 
   public boolean solving(int at) {
@@ -56,6 +59,10 @@ public final class PersonRow {
 
   /** Whether no commitment before has the date of this one. */
   public boolean firstOfDate(int at) {
+    return first[at];
+  }
+
+  private boolean noneBeforeOfDate(int at) {
     for (int i = at - 1; i >= 0; i--) {
       if (date[i] == date[at]) {
         return false;

@@ -1,6 +1,7 @@
 package roundwright.scheduling.crewing;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
 import java.util.stream.IntStream;
@@ -19,6 +20,7 @@ import roundwright.scheduling.rules.RuleBook;
 public final class Crewing {
   private static final int SWEEPS = 3;
   private static final int MOST_POLISHES = 12;
+  private static final int NEAR_MOMENTS = 4;
   private static final int LOGARITHMS = 4096;
   private static final double MILLIONTHS = 1_000_000.0;
   private static final double MOVES_PER_PLACE_AND_DEGREE = 1200.0;
@@ -112,23 +114,45 @@ public final class Crewing {
             .toList());
   }
 
-  /** Solves each moment and each round exactly in turn, until nothing is gained. */
+  /**
+   * Solves each moment and each round exactly in turn, until nothing is gained. After the first
+   * turn a moment is looked at again only where something near it in time got better.
+   */
   public void polish(Halt halt) {
-    for (int turn = 0; turn < MOST_POLISHES; turn++) {
-      boolean better = false;
-      for (int moment = 0; moment < parts.moments() && !halt.now(); moment++) {
-        better |= parts.crewMoment(moment);
-      }
-      for (int round : roundsWithGroups()) {
-        if (!halt.now() && frame.groupsOf[round].length > 1) {
-          better |= parts.seatRound(round);
+    boolean[] stale = new boolean[parts.moments()];
+    Arrays.fill(stale, true);
+    for (int turn = 0; turn < MOST_POLISHES && !halt.now(); turn++) {
+      boolean better = polishMoments(stale, halt);
+      if (turn < SWEEPS) {
+        for (int round : roundsWithGroups()) {
+          if (!halt.now() && frame.groupsOf[round].length > 1 && parts.seatRound(round)) {
+            better = true;
+            parts.markMoments(round, stale, NEAR_MOMENTS);
+          }
         }
       }
       better |= untangling.everybody(halt);
-      if (!better || halt.now()) {
+      if (!better) {
         return;
       }
     }
+  }
+
+  private boolean polishMoments(boolean[] stale, Halt halt) {
+    boolean better = false;
+    for (int moment = 0; moment < stale.length && !halt.now(); moment++) {
+      if (stale[moment]) {
+        stale[moment] = false;
+        if (parts.crewMoment(moment)) {
+          better = true;
+          int from = Math.max(0, moment - NEAR_MOMENTS);
+          int to = Math.min(stale.length, moment + NEAR_MOMENTS + 1);
+          Arrays.fill(stale, from, to, true);
+          stale[moment] = false;
+        }
+      }
+    }
+    return better;
   }
 
   /** How far a budget is used: 0 at the start, 1 or more once it is spent. */

@@ -74,6 +74,18 @@ final class ExactParts {
     return moments.size();
   }
 
+  /** Marks the moments near a round's groups. */
+  void markMoments(int round, boolean[] marks, int near) {
+    for (int moment = 0; moment < marks.length; moment++) {
+      for (int g : moments.get(moment)) {
+        if (frame.round[g] == round) {
+          int to = Math.min(marks.length, moment + near + 1);
+          Arrays.fill(marks, Math.max(0, moment - near), to, true);
+        }
+      }
+    }
+  }
+
   /** Duties wanted at a moment for each person who could take one: where crews are scarcest. */
   double scarcity(int moment) {
     int wanted = 0;

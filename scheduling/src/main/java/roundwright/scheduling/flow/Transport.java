@@ -17,6 +17,7 @@ public final class Transport {
   public static final long FORBIDDEN = Long.MAX_VALUE / 8;
 
   private static final int OUT = -1;
+  private static final int UNKNOWN = -2;
 
   private int rows;
   private int columns;
@@ -27,8 +28,8 @@ public final class Transport {
   private int[] column = new int[0];
   private long[] best = new long[0];
   private int[] bestRow = new int[0];
-  private int[][] waiting = new int[0][];
-  private int[] waitingAt = new int[0];
+  private int[] cheapest = new int[0];
+  private long[] cheapestCost = new long[0];
   private long[] distance = new long[0];
   private int[] via = new int[0];
   private int[][] inColumn = new int[0][];
@@ -59,8 +60,8 @@ public final class Transport {
       unitCost = new long[columns][];
       distance = new long[columns];
       via = new int[columns];
-      waitingAt = new int[columns];
-      waiting = new int[columns][];
+      cheapest = new int[columns];
+      cheapestCost = new long[columns];
       inColumn = new int[columns][];
       best = new long[columns * columns];
       bestRow = new int[columns * columns];
@@ -90,7 +91,7 @@ public final class Transport {
       total += outCost[row];
     }
     for (int c = 0; c < columns; c++) {
-      orderWaiting(c);
+      cheapest[c] = UNKNOWN;
       if (inColumn[c] == null || inColumn[c].length < unitCost[c].length) {
         inColumn[c] = new int[unitCost[c].length];
       }
@@ -100,28 +101,6 @@ public final class Transport {
     while (cheaper) {
       cheaper = augment();
     }
-  }
-
-  private void orderWaiting(int c) {
-    long[] keys = new long[rows];
-    int count = 0;
-    int[] candidates = new int[rows];
-    for (int row = 0; row < rows; row++) {
-      if (cost[row * columns + c] < FORBIDDEN) {
-        keys[row] = cost[row * columns + c] - outCost[row];
-        candidates[count++] = row;
-      }
-    }
-    Integer[] order = new Integer[count];
-    for (int i = 0; i < count; i++) {
-      order[i] = candidates[i];
-    }
-    Arrays.sort(order, (a, b) -> Long.compare(keys[a], keys[b]));
-    waiting[c] = new int[count];
-    for (int i = 0; i < count; i++) {
-      waiting[c][i] = order[i];
-    }
-    waitingAt[c] = 0;
   }
 
   private boolean augment() {
@@ -149,17 +128,20 @@ public final class Transport {
     return true;
   }
 
-  /** The cheapest row outside that may enter a column: what it adds. */
+  /** What the cheapest row outside adds by entering a column; it is kept until it is taken. */
   private long entry(int c) {
-    int[] order = waiting[c];
-    while (waitingAt[c] < order.length && column[order[waitingAt[c]]] != OUT) {
-      waitingAt[c]++;
+    if (cheapest[c] == UNKNOWN || (cheapest[c] != OUT && column[cheapest[c]] != OUT)) {
+      cheapest[c] = OUT;
+      cheapestCost[c] = FORBIDDEN;
+      for (int row = 0; row < rows; row++) {
+        long there = cost[row * columns + c];
+        if (column[row] == OUT && there < FORBIDDEN && there - outCost[row] < cheapestCost[c]) {
+          cheapestCost[c] = there - outCost[row];
+          cheapest[c] = row;
+        }
+      }
     }
-    if (waitingAt[c] == order.length) {
-      return FORBIDDEN;
-    }
-    int row = order[waitingAt[c]];
-    return cost[row * columns + c] - outCost[row];
+    return cheapestCost[c];
   }
 
   private void correctLabels() {
@@ -193,7 +175,7 @@ public final class Transport {
       position = vacated;
       c = from;
     }
-    place(waiting[c][waitingAt[c]], c, position);
+    place(cheapest[c], c, position);
     for (c = last; c != OUT; c = via[c]) {
       refresh(c);
     }

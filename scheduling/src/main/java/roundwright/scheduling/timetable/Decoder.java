@@ -39,6 +39,7 @@ final class Decoder {
   final int[] lastEnd;
   private final boolean[] placed;
   private final int[][] pinStart;
+  private final boolean hasPinnedStarts;
   long shortage;
 
   Decoder(Problem problem, Supply supply) {
@@ -60,8 +61,10 @@ final class Decoder {
     for (int r = 0; r < problem.rounds; r++) {
       pinStart[r] = new int[0];
     }
+    boolean pinned = false;
     for (Pins.GroupPin pin : problem.pins().groups()) {
       if (pin.start().isPresent()) {
+        pinned = true;
         int r = problem.round(pin.round());
         int known = pinStart[r].length;
         if (known < pin.number()) {
@@ -71,6 +74,7 @@ final class Decoder {
         pinStart[r][pin.number() - 1] = LocalClock.epochMinute(pin.start().get());
       }
     }
+    hasPinnedStarts = pinned;
   }
 
   private static int[] dayStarts(Problem problem) {
@@ -207,12 +211,34 @@ final class Decoder {
 
   /** The soonest minute at which no group in the way is left, or the same where none is. */
   private int afterClash(int hall, int at, int minutes) {
-    for (int i = 0; i < takenCount[hall]; i++) {
-      if (takenFrom[hall][i] < at + minutes + setup && at < takenTo[hall][i] + setup) {
+    int count = takenCount[hall];
+    for (int i = firstEndingAfter(hall, at - setup); i < count; i++) {
+      if (takenFrom[hall][i] >= at + minutes + setup) {
+        return at;
+      }
+      if (at < takenTo[hall][i] + setup) {
         return takenTo[hall][i] + setup;
       }
     }
     return at;
+  }
+
+  /** By bisection: groups in a hall follow each other, but for pins, which stand first of all. */
+  private int firstEndingAfter(int hall, int minute) {
+    if (hasPinnedStarts) {
+      return 0;
+    }
+    int low = 0;
+    int high = takenCount[hall];
+    while (low < high) {
+      int middle = (low + high) >>> 1;
+      if (takenTo[hall][middle] <= minute) {
+        low = middle + 1;
+      } else {
+        high = middle;
+      }
+    }
+    return low;
   }
 
   /** The soonest minute that leaves a stretch without enough people behind, or the same. */

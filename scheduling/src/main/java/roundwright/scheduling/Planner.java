@@ -33,17 +33,18 @@ import roundwright.scheduling.timetable.Timetabling;
  * priced by the auditor. One call at a time for each instance.
  */
 public final class Planner {
-  private static final int MOST_DAY_PLANS = 16;
+  private static final int MOST_DAY_PLANS = 48;
   private static final int ENOUGH_DAY_PLANS = 6;
   private static final double FEWEST_LAYOUTS = 50;
   private static final double MOST_LAYOUTS = 1_000_000;
-  private static final double FIRST_DAY_PLAN_PART = 0.15;
+  private static final double FIRST_DAY_PLAN_PART = 0.12;
   private static final double DAY_PLAN_PART = 0.03;
   private static final double DAY_PLAN_POLISH_PART = 0.04;
   private static final double DAY_PLANS_UNTIL = 0.3;
-  private static final double DAY_PLANS_UNTIL_IF_BROKEN = 0.6;
+  private static final double DAY_PLANS_UNTIL_IF_BROKEN = 0.8;
   private static final double POLISH_AT = 0.97;
   private static final double MOVES_PER_LAYOUT = 8.0;
+  private static final double WARMER = 1.6;
   private static final double FIRST_PRESSURE = 0.1;
   private static final double MORE_PRESSURE = 0.08;
   private static final double LESS_PRESSURE = 0.05;
@@ -87,12 +88,13 @@ public final class Planner {
     Timetabling timetabling = new Timetabling(problem);
     Arrangement best = null;
     double pressure = FIRST_PRESSURE;
+    double warmth = 1;
     for (int attempt = 0; attempt < MOST_DAY_PLANS; attempt++) {
       if (best != null && enoughDayPlans(best, attempt)) {
         break;
       }
       Dice dice = new Dice(effort.seed() * 1_000_003 + attempt);
-      Frame frame = layOut(timetabling, pressure, attempt, dice, best);
+      Frame frame = layOut(timetabling, pressure, attempt, dice, warmth, best);
       Crewing crewing = new Crewing(frame, book, dice);
       crewing.firstPlan(best == null ? spending::overdue : spending::over);
       if (attempt > 0) {
@@ -107,9 +109,12 @@ public final class Planner {
       } else {
         pressure = Math.max(0, pressure - LESS_PRESSURE);
       }
-      if (best == null || found.compareTo(best) < 0) {
-        best = found;
+      if (book.hard(frame) > 0) {
+        timetabling.forget();
       }
+      boolean better = best == null || found.compareTo(best) < 0;
+      warmth = better ? 1 : warmth * WARMER;
+      best = better ? found : best;
       spending.report(Progress.Stage.FIRST_PLAN, best.hard, best.strain, stillWrong(best));
     }
     return best;
@@ -124,16 +129,16 @@ public final class Planner {
 
   /**
    * The first day plan is laid out in no time, so that there is something to stop with; the second
-   * takes its time, and those after it go on from there.
+   * takes its time, and those after it go on from there unless it was no good by itself.
    */
   private Frame layOut(
-      Timetabling timetabling, double pressure, int attempt, Dice dice, Arrangement best) {
-    double part =
-        switch (attempt) {
-          case 0 -> 0;
-          case 1 -> FIRST_DAY_PLAN_PART;
-          default -> DAY_PLAN_PART;
-        };
+      Timetabling timetabling,
+      double pressure,
+      int attempt,
+      Dice dice,
+      double warmth,
+      Arrangement best) {
+    double part = attempt == 0 ? 0 : timetabling.begun() ? DAY_PLAN_PART : FIRST_DAY_PLAN_PART;
     double usedBefore = spending.usedTime();
     double steps = effort.steps().orElse(Long.MAX_VALUE);
     double most = Math.max(FEWEST_LAYOUTS, Math.min(MOST_LAYOUTS, steps / MOVES_PER_LAYOUT) * part);
@@ -142,6 +147,7 @@ public final class Planner {
         timetabling.search(
             pressure,
             dice,
+            warmth,
             layouts -> {
               if (best != null) {
                 spending.reportNowAndThen(

@@ -5,6 +5,7 @@ import roundwright.scheduling.core.Dice;
 import roundwright.scheduling.core.Frame;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.rules.Ledger;
+import roundwright.scheduling.rules.RuleBook;
 
 /**
  * The neighbourhood: small changes to duties and competitors that never put a duty where its person
@@ -17,6 +18,8 @@ final class Moves {
   private static final int SWAP_DUTIES = CHANGE_DUTY + 15;
   private static final int MOVE_COMPETITOR = SWAP_DUTIES + 12;
   private static final int SWAP_COMPETITORS = MOVE_COMPETITOR + 16;
+  private static final int MEND_ONE_IN = 8;
+  private static final int PROPOSALS_BETWEEN_LISTS = 64;
   private static final int NEAR_GROUPS = 6;
   private static final int NOBODYS_GROUP = -1;
   private static final int LONGEST_WINDOW_MINUTES = 240;
@@ -27,6 +30,9 @@ final class Moves {
   private final Problem problem;
   private final Dice dice;
   private final Refill refill;
+  private final int[] troubledRow;
+  private int troubled;
+  private long proposals;
 
   Moves(Ledger ledger, Refill refill, Dice dice) {
     this.refill = refill;
@@ -35,10 +41,14 @@ final class Moves {
     this.frame = ledger.frame;
     this.problem = ledger.problem;
     this.dice = dice;
+    this.troubledRow = new int[problem.people + frame.groups];
   }
 
   boolean propose() {
     refill.begin();
+    if (ledger.hard() >= RuleBook.BREACH && dice.below(MEND_ONE_IN) == 0) {
+      return mend();
+    }
     int kind = dice.below(100);
     if (kind < CHANGE_DUTY) {
       return frame.places > 0 && changeDuty();
@@ -159,6 +169,53 @@ final class Moves {
     }
     refill.fill();
     return true;
+  }
+
+  /** A competitor whose groups collide, or of a group that is too short, to another group. */
+  private boolean mend() {
+    if (proposals++ % PROPOSALS_BETWEEN_LISTS == 0) {
+      listTroubled();
+    }
+    if (troubled == 0) {
+      return false;
+    }
+    int one = troubledRow[dice.below(troubled)];
+    int seat;
+    if (one < problem.people) {
+      int[] own = problem.personSeats[one];
+      seat = own[dice.below(own.length)];
+    } else {
+      int group = one - problem.people;
+      seat = board.member(group, dice.below(board.size[group]));
+    }
+    int[] groups = frame.groupsOf[problem.seatRound[seat]];
+    int from = board.seatGroup[seat];
+    int to = groups[dice.below(groups.length)];
+    if (from < 0 || from == to || frame.seatPin[seat] >= 0 || !refill.reseat(seat, to)) {
+      return false;
+    }
+    if (dice.below(4) > 0) {
+      int other = board.member(to, dice.below(board.size[to]));
+      if (other == seat || frame.seatPin[other] >= 0 || !refill.reseat(other, from)) {
+        return false;
+      }
+    }
+    refill.fill();
+    return true;
+  }
+
+  private void listTroubled() {
+    troubled = 0;
+    for (int p = 0; p < problem.people; p++) {
+      if (ledger.personHard(p) > 0 && problem.personSeats[p].length > 0) {
+        troubledRow[troubled++] = p;
+      }
+    }
+    for (int g = 0; g < frame.groups; g++) {
+      if (ledger.groupHard(g) >= RuleBook.BREACH && board.size[g] > 0) {
+        troubledRow[troubled++] = problem.people + g;
+      }
+    }
   }
 
   /** Two people take over all of each other's duties that start in a stretch of time. */

@@ -66,11 +66,12 @@ public final class Timetabling {
    *
    * @param partKeptBack part of the people there that no crew may count on, 0 to 1: more of it
    *     spreads the groups further apart
+   * @param warmth how much warmer than lukewarm a search begins that goes on from another; 1 and up
    */
-  public List<Slot> search(double partKeptBack, Dice chance, Budget budget) {
+  public List<Slot> search(double partKeptBack, Dice chance, double warmth, Budget budget) {
     pressure = partKeptBack;
     dice = chance;
-    double warm = begun ? LUKEWARM : WARM;
+    double warm = begun ? Math.min(WARM, LUKEWARM * warmth) : WARM;
     if (!begun) {
       startAnew();
     }
@@ -113,6 +114,11 @@ public final class Timetabling {
   public void forget() {
     begun = false;
     outlook.forgetLessons();
+  }
+
+  /** Whether the next search goes on from the best layout of the last one. */
+  public boolean begun() {
+    return begun;
   }
 
   private void startAnew() {

@@ -39,7 +39,7 @@ final class DemoCommand implements Callable<Integer> {
   @Option(
       names = "--seconds",
       description = "How long to plan (default: ${DEFAULT-VALUE}).",
-      defaultValue = "20")
+      defaultValue = "30")
   private int seconds;
 
   @Option(

@@ -4,6 +4,7 @@ import io.javalin.http.Context;
 import io.javalin.http.HttpStatus;
 import java.nio.file.Path;
 import java.util.Locale;
+import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import ognl.OgnlContext;
@@ -11,7 +12,9 @@ import ognl.OgnlException;
 import ognl.OgnlRuntime;
 import ognl.PropertyAccessor;
 import org.thymeleaf.TemplateEngine;
+import org.thymeleaf.context.IExpressionContext;
 import org.thymeleaf.context.ITemplateContext;
+import org.thymeleaf.linkbuilder.StandardLinkBuilder;
 import org.thymeleaf.messageresolver.AbstractMessageResolver;
 import org.thymeleaf.templatemode.TemplateMode;
 import org.thymeleaf.templateresolver.AbstractConfigurableTemplateResolver;
@@ -54,6 +57,7 @@ public final class Html {
     resolver.setCharacterEncoding("UTF-8");
     engine.setTemplateResolver(resolver);
     engine.setMessageResolver(new Sentences(messages));
+    engine.setLinkBuilder(new FromTheRoot());
   }
 
   /** True where htmx asks for a part of a page, not for a page. */
@@ -106,6 +110,15 @@ public final class Html {
     @Override
     public String toString() {
       return guard.formToken(ctx);
+    }
+  }
+
+  /** Links begin at the root: the server has no path of its own before them. */
+  private static final class FromTheRoot extends StandardLinkBuilder {
+    @Override
+    protected String computeContextPath(
+        IExpressionContext context, String base, Map<String, Object> parameters) {
+      return "";
     }
   }
 

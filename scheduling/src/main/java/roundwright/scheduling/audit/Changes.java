@@ -5,13 +5,13 @@ import java.time.Instant;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
-import java.util.HashSet;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import java.util.SortedMap;
 import java.util.TreeMap;
+import java.util.TreeSet;
 import roundwright.scheduling.model.Group;
 import roundwright.scheduling.model.Plan;
 import roundwright.scheduling.model.Role;
@@ -73,10 +73,10 @@ final class Changes {
   static Changes between(Directory event, Plan plan, Kept kept) {
     SortedMap<Key, List<Commitment>> old = commitments(event, kept.plan());
     SortedMap<Key, List<Commitment>> fresh = commitments(event, plan);
-    Set<Key> keys = new HashSet<>(old.keySet());
+    Set<Key> keys = new TreeSet<>(old.keySet());
     keys.addAll(fresh.keySet());
     List<Change> changes = new ArrayList<>();
-    for (Key key : keys.stream().sorted().toList()) {
+    for (Key key : keys) {
       List<Commitment> before = old.getOrDefault(key, List.of());
       List<Commitment> after = fresh.getOrDefault(key, List.of());
       int[] partners = partners(before, after);

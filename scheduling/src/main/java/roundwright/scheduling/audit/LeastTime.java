@@ -38,7 +38,7 @@ final class LeastTime {
     }
     long steps =
         List.of(
-                steps(event, works, event.shared(round, group)),
+                steps(event, works, Math.max(1, event.shared(round, group))),
                 steps(event, longestPath, 1),
                 steps(event, scrambles, Math.max(1, crew.scramblers())),
                 steps(event, carried, Math.max(1, crew.runners())))

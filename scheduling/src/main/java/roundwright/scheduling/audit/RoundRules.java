@@ -134,6 +134,9 @@ final class RoundRules {
       List<Group> groups = given.plan().groups(round);
       BigDecimal entrants = BigDecimal.valueOf(given.event().entrants(round).size());
       long shared = groups.stream().mapToLong(group -> given.event().shared(round, group)).sum();
+      if (shared == 0) {
+        continue; // groups that a hand has left empty
+      }
       for (Group group : groups) {
         BigDecimal fair =
             entrants

@@ -84,9 +84,9 @@ record Entrants(List<Person> people, boolean merelyLikely) {
   }
 
   private static Entrants sorted(List<Person> people, boolean merelyLikely) {
-    List<Person> byId = new ArrayList<>(people);
-    byId.sort(Comparator.comparing(Person::id));
-    return new Entrants(List.copyOf(byId), merelyLikely);
+    List<Person> inOrder = new ArrayList<>(people);
+    inOrder.sort(Comparator.comparing(Person::id));
+    return new Entrants(List.copyOf(inOrder), merelyLikely);
   }
 
   /** The time expected of a person in a discipline, or null where they have no entry. */

@@ -31,6 +31,11 @@ public record Cost(long breaches, long gaps, BigDecimal strain) implements Compa
 
   @Override
   public String toString() {
-    return breaches + " breaches, " + gaps + " gaps, strain " + roundedStrain();
+    return breaches
+        + (breaches == 1 ? " breach, " : " breaches, ")
+        + gaps
+        + (gaps == 1 ? " gap" : " gaps")
+        + ", strain "
+        + roundedStrain();
   }
 }

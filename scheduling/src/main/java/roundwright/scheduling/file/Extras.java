@@ -5,9 +5,9 @@ import com.fasterxml.jackson.databind.node.ArrayNode;
 import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.nio.charset.StandardCharsets;
 import java.util.LinkedHashMap;
+import java.util.List;
 import java.util.Map;
 import java.util.Optional;
-import java.util.Set;
 
 /**
  * The keys of a file that begin with {@code x-}: ignored by everything here and kept for whoever
@@ -19,7 +19,7 @@ public final class Extras {
   public static final Extras NONE = new Extras(Map.of());
 
   /** Objects that are left out when nothing in them differs from the default. */
-  private static final Set<String> MADE_AGAIN = Set.of("rules", "weights", "pins");
+  private static final List<String> MADE_AGAIN = List.of("pins", "rules", "weights");
 
   private final Map<String, Map<String, JsonNode>> byPlace;
 
@@ -118,7 +118,7 @@ public final class Extras {
         add(array.get(i), element(place, array.get(i), i));
       }
     } else if (node instanceof ObjectNode object) {
-      for (String name : MADE_AGAIN.stream().sorted().toList()) {
+      for (String name : MADE_AGAIN) {
         if (!object.has(name) && holdsAnythingUnder(place + "/" + name)) {
           object.putObject(name);
         }

@@ -2,7 +2,7 @@ package roundwright.scheduling.rules;
 
 import java.util.Arrays;
 import java.util.Comparator;
-import java.util.HashMap;
+import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.stream.IntStream;
@@ -274,7 +274,7 @@ final class FrameRules {
 
     @Override
     public long price(Frame frame) {
-      Map<Long, int[]> spans = new HashMap<>();
+      Map<Long, int[]> spans = new LinkedHashMap<>();
       for (int g : inOrderOfStart(frame)) {
         long venueDay = ((long) frame.problem.hallVenue[frame.hall[g]] << 32) + frame.date[g];
         int[] span =

@@ -32,9 +32,10 @@ import roundwright.scheduling.model.Plan;
     name = "check",
     mixinStandardHelpOptions = true,
     sortOptions = false,
+    header = "Judges any plan for an event, rule by rule.",
     description = {
-      "Judges a plan for an event, rule by rule: breaches are rules broken, gaps are duties that",
-      "nobody fills, strain is discomfort. Any plan will do, also one made by hand."
+      "Breaches are rules broken, gaps are duties that nobody fills, strain is",
+      "discomfort. Any plan will do, also one made by hand."
     },
     exitCodeListHeading = "%nExit codes:%n",
     exitCodeList = {"0:no rule is broken", "1:some rule is broken", "2:a file is wrong"},

@@ -21,9 +21,10 @@ import roundwright.scheduling.model.Hall;
 @Command(
     name = "forecast",
     mixinStandardHelpOptions = true,
+    header = "Says how long each round will take, and what that hangs on.",
     description = {
-      "Says how many groups each round needs in its largest suitable hall, how long each takes,",
-      "and what that hangs on: more of it makes the round shorter."
+      "For each round: how many groups it needs in its largest suitable hall, how",
+      "long the longest of them takes, and what there is too little of."
     },
     exitCodeListHeading = "%nExit codes:%n",
     exitCodeList = {"0:done", "2:the file is wrong"},

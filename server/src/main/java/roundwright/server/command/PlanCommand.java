@@ -34,8 +34,10 @@ import roundwright.scheduling.model.Plan;
     name = "plan",
     mixinStandardHelpOptions = true,
     sortOptions = false,
+    header = "Plans an event, from an event file to a plan file.",
     description = {
-      "Plans an event: when and where each group solves, who is in it, who is on its crew.",
+      "Decides when and where each group solves, who is in it and who is on its",
+      "crew.",
       "Press Ctrl-C to stop early and keep the best plan so far."
     },
     exitCodeListHeading = "%nExit codes:%n",

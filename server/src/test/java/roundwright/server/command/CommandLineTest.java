@@ -279,8 +279,7 @@ final class CommandLineTest {
     lines.report(report(0.1, "1234.56", "two-places"));
     lines.report(report(0.2, "7"));
     lines.finish();
-    String first =
-        "   0.1 s  first plan  1 breaches, 0 gaps, strain 1234.6; still wrong: two-places";
+    String first = "   0.1 s  first plan  1 breach, 0 gaps, strain 1234.6; still wrong: two-places";
     String second = "   0.2 s  first plan  0 breaches, 0 gaps, strain 7.0";
     String blanks = " ".repeat(first.length() - second.length());
     assertEquals(

@@ -288,7 +288,9 @@ final class Shape {
         for (int b = 0; b < borrowed; b++) {
           own.set(own.size() - 1 - b, slower.get(from + b));
         }
-        own.add(slower.get(slower.size() - 1));
+        if (!slower.isEmpty()) {
+          own.add(slower.get(slower.size() - 1));
+        }
       }
     }
   }

@@ -58,11 +58,11 @@ public final class Planner {
   private final Effort effort;
 
   private Planner(Event event, Effort effort, Progress progress) {
+    this.spending = new Spending(effort, progress);
     this.event = event;
     this.problem = new Problem(event);
     this.book = new RuleBook(problem);
     this.effort = effort;
-    this.spending = new Spending(effort, progress);
   }
 
   /**
@@ -96,7 +96,10 @@ public final class Planner {
       Dice dice = new Dice(effort.seed() * 1_000_003 + attempt);
       Frame frame = layOut(timetabling, pressure, attempt, dice, warmth, best);
       Crewing crewing = new Crewing(frame, book, dice);
-      crewing.firstPlan(best == null ? spending::overdue : spending::over);
+      boolean whole = crewing.firstPlan(best == null ? spending::overdue : spending::over);
+      if (!whole && best != null) {
+        break;
+      }
       if (attempt > 0) {
         double before = spending.usedTime();
         crewing.polish(

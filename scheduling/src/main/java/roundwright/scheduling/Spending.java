@@ -9,6 +9,7 @@ import java.util.List;
  */
 final class Spending {
   private static final double SECONDS_BETWEEN_REPORTS = 0.2;
+  private static final double FIRST_PLAN_BEYOND_SECONDS = 1.5;
   private static final double NANOS = 1e9;
 
   private final Effort effort;
@@ -41,7 +42,8 @@ final class Spending {
 
   /** Past even what a first plan may take beyond the seconds given. */
   boolean overdue() {
-    return effort.seconds().isPresent() && elapsedSeconds() >= effort.seconds().getAsDouble() + 2;
+    return effort.seconds().isPresent()
+        && elapsedSeconds() >= effort.seconds().getAsDouble() + FIRST_PLAN_BEYOND_SECONDS;
   }
 
   synchronized void spent(long moves) {

@@ -71,8 +71,12 @@ public final class Crewing {
     return Arrangement.of(ledger);
   }
 
-  /** Seats everybody and fills what duties it can; polishes until nothing is gained. */
-  public void firstPlan(Halt halt) {
+  /**
+   * Seats everybody and fills what duties it can.
+   *
+   * @return whether it came to the end before the halt
+   */
+  public boolean firstPlan(Halt halt) {
     for (int place = 0; place < frame.places; place++) {
       if (frame.placePin[place] >= 0) {
         ledger.duty(place, frame.placePin[place]);
@@ -100,10 +104,11 @@ public final class Crewing {
     moments.sort(Comparator.comparingDouble((Integer m) -> -scarcity[m]).thenComparing(m -> m));
     for (int moment : moments) {
       if (halt.now()) {
-        return;
+        return false;
       }
       parts.crewMoment(moment);
     }
+    return true;
   }
 
   private List<Integer> roundsWithGroups() {

@@ -73,6 +73,6 @@ public final class EditionRoutes {
   public void showBoard(Context ctx) {
     EventName event = Access.visitor(ctx).eventName();
     Board board = reads.board(event, ctx.pathParam("hall")).orElseThrow(NotFoundResponse::new);
-    html.show(ctx, View.of("editions/board").with("board", board).orFragment("board"));
+    html.show(ctx, View.of("editions/board").with("page", board).orFragment("board"));
   }
 }

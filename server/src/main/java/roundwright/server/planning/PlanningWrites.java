@@ -6,7 +6,6 @@ import static org.jooq.impl.DSL.max;
 import static roundwright.server.store.schema.Tables.DRAFT;
 import static roundwright.server.store.schema.Tables.EDITION;
 
-import io.javalin.http.NotFoundResponse;
 import java.util.Optional;
 import roundwright.scheduling.model.Event;
 import roundwright.scheduling.model.Plan;
@@ -15,6 +14,7 @@ import roundwright.server.ids.DraftId;
 import roundwright.server.ids.EventId;
 import roundwright.server.store.Database;
 import roundwright.server.store.Journal;
+import roundwright.server.store.Missing;
 import roundwright.server.store.StaleVersion;
 import roundwright.server.store.Tx;
 import roundwright.server.store.schema.tables.records.DraftRecord;
@@ -83,7 +83,7 @@ public final class PlanningWrites {
                 DRAFT,
                 DRAFT.EVENT_ID.eq(draft.event().number()).and(DRAFT.NUMBER.eq(draft.number())));
     if (row == null) {
-      throw new NotFoundResponse();
+      throw new Missing("draft " + draft.number());
     }
     return row;
   }

@@ -8,6 +8,7 @@ import io.javalin.http.MethodNotAllowedResponse;
 import java.util.Set;
 import org.slf4j.Logger;
 import org.slf4j.LoggerFactory;
+import roundwright.server.store.Missing;
 import roundwright.server.store.StaleVersion;
 
 /**
@@ -26,6 +27,7 @@ public final class ErrorPages {
 
   public void register(RoutesConfig routes) {
     routes.exception(HttpResponseException.class, this::refused);
+    routes.exception(Missing.class, (e, ctx) -> show(ctx, HttpStatus.NOT_FOUND.getCode(), ""));
     routes.exception(StaleVersion.class, (e, ctx) -> show(ctx, HttpStatus.CONFLICT.getCode(), ""));
     routes.exception(Exception.class, this::failed);
   }

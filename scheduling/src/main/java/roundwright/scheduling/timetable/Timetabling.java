@@ -1,6 +1,8 @@
 package roundwright.scheduling.timetable;
 
 import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.Collections;
 import java.util.Comparator;
 import java.util.List;
 import java.util.stream.IntStream;
@@ -23,6 +25,8 @@ public final class Timetabling {
   private final Outlook outlook;
   private final List<List<Shape>> shapes = new ArrayList<>();
   private final int[] rounds;
+  private final int halls;
+  private final int setupMinutes;
   private final int[] firstOrder;
   private final Shape[] shape;
   private final int[] earliest;
@@ -34,6 +38,8 @@ public final class Timetabling {
   private double foundPrice;
 
   public Timetabling(Problem problem) {
+    halls = problem.halls;
+    setupMinutes = problem.event.rules().setupMinutes();
     Supply supply = new Supply(problem);
     decoder = new Decoder(problem, supply);
     outlook = new Outlook(problem, decoder, supply);
@@ -121,11 +127,38 @@ public final class Timetabling {
     return begun;
   }
 
+  /** Spreads the rounds over the halls, the longest first, each in the shape that adds least. */
   private void startAnew() {
     order = firstOrder.clone();
-    for (int r : rounds) {
-      shape[r] = shapes.get(r).get(0);
-      earliest[r] = Problem.NEVER;
+    Arrays.fill(earliest, Problem.NEVER);
+    int[] load = new int[halls];
+    IntStream.of(rounds)
+        .boxed()
+        .sorted(Comparator.comparingInt((Integer r) -> -minutes(shapes.get(r).get(0))))
+        .forEach(
+            r -> {
+              shape[r] =
+                  Collections.min(
+                      shapes.get(r), Comparator.comparingInt(one -> fullestHall(one, load)));
+              add(shape[r], load, 1);
+            });
+  }
+
+  private int minutes(Shape one) {
+    return IntStream.of(one.minutes).sum() + one.groups * setupMinutes;
+  }
+
+  /** Minutes in use in the fullest of a shape's halls, and a little for all the shape takes. */
+  private int fullestHall(Shape one, int[] load) {
+    add(one, load, 1);
+    int fullest = IntStream.of(one.hall).map(hall -> load[hall]).max().getAsInt();
+    add(one, load, -1);
+    return fullest + minutes(one) / 4;
+  }
+
+  private void add(Shape one, int[] load, int sign) {
+    for (int i = 0; i < one.groups; i++) {
+      load[one.hall[i]] += sign * (one.minutes[i] + setupMinutes);
     }
   }
 
@@ -148,8 +181,7 @@ public final class Timetabling {
   private Choice choice() {
     return new Choice(
         IntStream.of(order).boxed().toList(),
-        java.util.Collections.unmodifiableList(
-            new ArrayList<>(java.util.Arrays.asList(shape.clone()))),
+        Collections.unmodifiableList(Arrays.asList(shape.clone())),
         IntStream.of(earliest).boxed().toList());
   }
 

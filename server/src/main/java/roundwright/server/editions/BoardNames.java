@@ -10,14 +10,14 @@ import java.util.Map;
  * and shorter names, never smaller type. A name that is too long keeps as many of its leading parts
  * as fit and the first letter of the next; where two people would read alike they get more letters.
  *
- * @param columns 3 to 5
+ * @param columns 2 to 5
  * @param left how many people have no room at all
  */
 public record BoardNames(List<String> names, int columns, int left) {
   private static final int ROWS = 8;
-  private static final int FEWEST_COLUMNS = 3;
+  private static final int FEWEST_COLUMNS = 2;
   private static final int MOST_COLUMNS = 5;
-  private static final int[] LETTERS_BY_COLUMNS = {14, 11, 9};
+  private static final int[] LETTERS_BY_COLUMNS = {22, 14, 11, 9};
 
   public BoardNames {
     names = List.copyOf(names);

@@ -27,6 +27,8 @@ public record PlanPage(
     List<FindingLine> findings,
     int moreFindings,
     SolvePanel solve) {
+  private static final int STRAIN_SEEN_AT_ONCE = 8;
+
   public PlanPage {
     drafts = List.copyOf(drafts);
     findings = List.copyOf(findings);
@@ -54,6 +56,24 @@ public record PlanPage(
             solve.best,
             solve.stillWrong,
             trouble));
+  }
+
+  /** Breaches and gaps, and the heaviest of what is only strain: what is to be seen at once. */
+  public List<FindingLine> worstFindings() {
+    return findings.subList(0, worst());
+  }
+
+  /** What is left for whoever wants to know it all. */
+  public List<FindingLine> otherFindings() {
+    return findings.subList(worst(), findings.size());
+  }
+
+  private int worst() {
+    long urgent =
+        findings.stream()
+            .filter(line -> line.level().equals("breach") || line.level().equals("gap"))
+            .count();
+    return Math.min(findings.size(), (int) urgent + STRAIN_SEEN_AT_ONCE);
   }
 
   /**

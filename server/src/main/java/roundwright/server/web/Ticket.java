@@ -132,6 +132,10 @@ public record Ticket(
     if (lastNumber - number + 1 >= groups) {
       return round;
     }
-    return round + (lastNumber > number ? ".groups" : ".group");
+    return switch (lastNumber - number) {
+      case 0 -> round + ".group";
+      case 1 -> round + ".two";
+      default -> round + ".groups";
+    };
   }
 }

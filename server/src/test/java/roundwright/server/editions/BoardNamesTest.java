@@ -29,12 +29,23 @@ class BoardNamesTest {
 
   @Test
   void whoWouldReadAlikeGetsMoreLetters() {
-    BoardNames names = BoardNames.of(List.of("Maren Thistlewood", "Maren Tidewellington"));
+    BoardNames names =
+        BoardNames.of(List.of("Maren Thistlewood-Quarrier", "Maren Tidewellington-Ashgrove"));
     assertEquals(List.of("Maren Th.", "Maren Ti."), names.names());
   }
 
   @ParameterizedTest
-  @CsvSource({"0, 3, 0", "24, 3, 0", "25, 4, 0", "32, 4, 0", "33, 5, 0", "40, 5, 0", "41, 5, 2"})
+  @CsvSource({
+    "0, 2, 0",
+    "16, 2, 0",
+    "17, 3, 0",
+    "24, 3, 0",
+    "25, 4, 0",
+    "32, 4, 0",
+    "33, 5, 0",
+    "40, 5, 0",
+    "41, 5, 2"
+  })
   void moreNamesMakeMoreColumnsAndNeverMoreRows(int people, int columns, int left) {
     List<String> all = IntStream.range(0, people).mapToObj(i -> "Person " + i).toList();
     BoardNames names = BoardNames.of(all);

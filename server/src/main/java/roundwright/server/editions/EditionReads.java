@@ -58,19 +58,21 @@ public final class EditionReads {
   /** The newest edition and the plan it published. */
   private record Newest(EditionMark edition, long planId) {}
 
-  private static Optional<Newest> newest(Tx tx, EventId event, ZoneId zone) {
-    return tx.sql()
-        .select(EDITION.NUMBER, EDITION.PUBLISHED_AT, EDITION.PLAN_ID)
-        .from(EDITION)
-        .where(EDITION.EVENT_ID.eq(event.number()))
-        .orderBy(EDITION.NUMBER.desc())
-        .limit(1)
-        .fetchOptional(
-            row ->
-                new Newest(
-                    new EditionMark(
-                        row.get(EDITION.NUMBER), row.get(EDITION.PUBLISHED_AT).atZone(zone)),
-                    row.get(EDITION.PLAN_ID)));
+  private static Field<Optional<Newest>> newest(EventId event, ZoneId zone) {
+    return multiset(
+            select(EDITION.NUMBER, EDITION.PUBLISHED_AT, EDITION.PLAN_ID)
+                .from(EDITION)
+                .where(EDITION.EVENT_ID.eq(event.number()))
+                .and(EDITION.NUMBER.eq(newestNumber(event))))
+        .convertFrom(
+            rows ->
+                rows.stream()
+                    .findFirst()
+                    .map(
+                        row ->
+                            new Newest(
+                                new EditionMark(row.value1(), row.value2().atZone(zone)),
+                                row.value3())));
   }
 
   private static Field<Integer> newestNumber(EventId event) {
@@ -95,10 +97,12 @@ public final class EditionReads {
   public PublicPage publicPage(EventName event, Optional<LocalDate> day, LookUp lookUp) {
     return database.read(
         tx -> {
-          Frame frame = TicketReads.frame(tx, event.id());
+          TicketReads.With<Optional<Newest>> read =
+              TicketReads.frame(tx, event.id(), newest(event.id(), event.zone()));
+          Frame frame = read.frame();
+          Optional<Newest> newest = read.more();
           LocalDate today = tx.now().atZone(event.zone()).toLocalDate();
           LocalDate shown = frame.day(day, today);
-          Optional<Newest> newest = newest(tx, event.id(), event.zone());
           Optional<Lanes> lanes =
               newest.map(
                   one ->

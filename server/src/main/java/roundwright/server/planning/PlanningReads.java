@@ -4,6 +4,7 @@ import static org.jooq.impl.DSL.coalesce;
 import static org.jooq.impl.DSL.field;
 import static org.jooq.impl.DSL.inline;
 import static org.jooq.impl.DSL.max;
+import static org.jooq.impl.DSL.multiset;
 import static org.jooq.impl.DSL.select;
 import static org.jooq.impl.DSL.sum;
 import static roundwright.server.store.schema.Tables.DRAFT;
@@ -44,6 +45,7 @@ import roundwright.server.planning.PlanPage.Score;
 import roundwright.server.planning.PlanPage.SolvePanel;
 import roundwright.server.store.Database;
 import roundwright.server.store.Tx;
+import roundwright.server.store.schema.tables.SolveRun;
 import roundwright.server.ticket.Frame;
 import roundwright.server.ticket.LaneMaker;
 import roundwright.server.ticket.TicketReads;
@@ -55,6 +57,10 @@ public final class PlanningReads {
   private static final int MOST_FINDINGS = 60;
   private static final Field<BigDecimal> BREACHES = found("breach");
   private static final Field<BigDecimal> GAPS = found("gap");
+  private static final SolveRun RUNS_OF_DRAFT = SOLVE_RUN.as("runs_of_draft");
+  private static final SolvePanel IDLE =
+      new SolvePanel(
+          "idle", 0, 1, BigDecimal.ZERO, 0, "", Optional.empty(), Optional.empty(), List.of(), "");
   private static final List<String> ROLES = List.of("judge", "scrambler", "runner");
 
   private final Database database;
@@ -86,8 +92,8 @@ public final class PlanningReads {
                     .value1()));
   }
 
-  /** All drafts of an event with what their plans scored. */
-  private record Drafts(List<DraftRow> rows) {
+  /** An event's drafts, the newest first, read along with its frame. */
+  private record Drafts(Frame frame, List<DraftRow> rows) {
     /** The one asked for, else the newest; empty where there is none of that number. */
     Optional<DraftRow> chosen(Optional<Integer> number) {
       return rows.stream()
@@ -100,51 +106,66 @@ public final class PlanningReads {
     }
   }
 
-  private record DraftRow(DraftMark mark, long planId, Optional<Score> score) {}
-
-  /** What an event without drafts shows: the draft that its first change makes. */
-  private static Drafts orFirst(Drafts drafts, Tx tx, ZoneId zone) {
-    DraftMark first =
-        new DraftMark(0, PlanningWrites.FIRST, "", 0, tx.now().atZone(zone), 0, false);
-    return drafts.rows().isEmpty()
-        ? new Drafts(List.of(new DraftRow(first, 0, Optional.empty())))
-        : drafts;
-  }
+  private record DraftRow(DraftMark mark, long planId, Optional<Score> score, SolvePanel panel) {}
 
   private static Drafts drafts(Tx tx, EventName event) {
-    Field<Integer> newest =
+    Field<Integer> newestEdition =
         field(
             select(max(EDITION.NUMBER))
                 .from(EDITION)
                 .where(EDITION.EVENT_ID.eq(event.id().number())));
-    Drafts drafts =
-        new Drafts(
-            tx.sql()
-                .select(
-                    DRAFT.ID,
-                    DRAFT.NUMBER,
-                    DRAFT.NAME,
-                    DRAFT.VERSION,
-                    DRAFT.CHANGED_AT,
-                    DRAFT.PLAN_ID,
-                    PLAN.BREACHES,
-                    PLAN.GAPS,
-                    PLAN.STRAIN,
-                    EDITION.NUMBER,
-                    EDITION.PLAN_ID)
-                .from(DRAFT)
-                .join(PLAN)
-                .on(PLAN.ID.eq(DRAFT.PLAN_ID))
-                .leftJoin(EDITION)
-                .on(EDITION.EVENT_ID.eq(DRAFT.EVENT_ID))
-                .and(EDITION.NUMBER.eq(newest))
-                .where(DRAFT.EVENT_ID.eq(event.id().number()))
-                .orderBy(DRAFT.NUMBER.desc())
-                .fetch(row -> draftRow(row, event.zone())));
-    return orFirst(drafts, tx, event.zone());
+    Field<Long> newestRun =
+        field(
+            select(max(RUNS_OF_DRAFT.ID))
+                .from(RUNS_OF_DRAFT)
+                .where(RUNS_OF_DRAFT.DRAFT_ID.eq(DRAFT.ID)));
+    List<Field<?>> columns =
+        new ArrayList<>(
+            List.of(
+                DRAFT.ID,
+                DRAFT.NUMBER,
+                DRAFT.NAME,
+                DRAFT.VERSION,
+                DRAFT.CHANGED_AT,
+                DRAFT.PLAN_ID,
+                PLAN.BREACHES,
+                PLAN.GAPS,
+                PLAN.STRAIN,
+                EDITION.NUMBER,
+                EDITION.PLAN_ID));
+    columns.addAll(List.of(SOLVE_RUN.fields()));
+    TicketReads.With<List<DraftRow>> read =
+        TicketReads.frame(
+            tx,
+            event.id(),
+            multiset(
+                    select(columns)
+                        .from(DRAFT)
+                        .join(PLAN)
+                        .on(PLAN.ID.eq(DRAFT.PLAN_ID))
+                        .leftJoin(EDITION)
+                        .on(EDITION.EVENT_ID.eq(DRAFT.EVENT_ID))
+                        .and(EDITION.NUMBER.eq(newestEdition))
+                        .leftJoin(SOLVE_RUN)
+                        .on(SOLVE_RUN.ID.eq(newestRun))
+                        .where(DRAFT.EVENT_ID.eq(event.id().number()))
+                        .orderBy(DRAFT.NUMBER.desc()))
+                .convertFrom(rows -> rows.map(row -> draftRow(row, event.zone(), tx.now()))));
+    return new Drafts(
+        read.frame(),
+        read.more().isEmpty() ? List.of(noneYet(event.zone(), tx.now())) : read.more());
   }
 
-  private static DraftRow draftRow(Record row, ZoneId zone) {
+  /** What an event without drafts shows: the draft that its first change makes. */
+  private static DraftRow noneYet(ZoneId zone, Instant now) {
+    return new DraftRow(
+        new DraftMark(0, PlanningWrites.FIRST, "", 0, now.atZone(zone), 0, false),
+        0,
+        Optional.empty(),
+        IDLE);
+  }
+
+  private static DraftRow draftRow(Record row, ZoneId zone, Instant now) {
     Integer edition = row.get(EDITION.NUMBER);
     DraftMark mark =
         new DraftMark(
@@ -158,7 +179,8 @@ public final class PlanningReads {
     return new DraftRow(
         mark,
         row.get(DRAFT.PLAN_ID),
-        score(row.get(PLAN.BREACHES), row.get(PLAN.GAPS), row.get(PLAN.STRAIN)));
+        score(row.get(PLAN.BREACHES), row.get(PLAN.GAPS), row.get(PLAN.STRAIN)),
+        row.get(SOLVE_RUN.ID) == null ? IDLE : panel(row, now));
   }
 
   private static Optional<Score> score(Long breaches, Long gaps, BigDecimal strain) {
@@ -175,7 +197,7 @@ public final class PlanningReads {
           if (draft.isEmpty()) {
             return Optional.empty();
           }
-          Frame frame = TicketReads.frame(tx, event.id());
+          Frame frame = drafts.frame();
           LocalDate today = tx.now().atZone(event.zone()).toLocalDate();
           LocalDate day = frame.day(asked, today);
           List<Ticket> tickets = tickets(tx, draft.get().planId(), frame);
@@ -190,7 +212,7 @@ public final class PlanningReads {
                   draft.get().score(),
                   findings.stream().limit(MOST_FINDINGS).toList(),
                   Math.max(0, findings.size() - MOST_FINDINGS),
-                  panel(tx, draft.get().mark().id())));
+                  draft.get().panel()));
         });
   }
 
@@ -234,44 +256,27 @@ public final class PlanningReads {
         .toList();
   }
 
-  private static SolvePanel panel(Tx tx, long draftRow) {
-    return tx.sql()
-        .selectFrom(SOLVE_RUN)
-        .where(SOLVE_RUN.DRAFT_ID.eq(draftRow))
-        .orderBy(SOLVE_RUN.ID.desc())
-        .limit(1)
-        .fetchOptional()
-        .map(
-            row -> {
-              boolean underWay =
-                  row.getState().equals("running") || row.getState().equals("waiting");
-              boolean lost =
-                  underWay && row.getBeatAt().isBefore(tx.now().minus(SolveRuns.SILENCE));
-              return new SolvePanel(
-                  lost ? "interrupted" : row.getState(),
-                  row.getId(),
-                  row.getSeed(),
-                  Optional.ofNullable(row.getElapsedSeconds()).orElse(BigDecimal.ZERO),
-                  row.getWantedSeconds(),
-                  Optional.ofNullable(row.getStage()).orElse(""),
-                  score(row.getFirstBreaches(), row.getFirstGaps(), row.getFirstStrain()),
-                  score(row.getBestBreaches(), row.getBestGaps(), row.getBestStrain()),
-                  Optional.ofNullable(row.getStillWrong()).orElse("").lines().toList(),
-                  lost ? "restart" : Optional.ofNullable(row.getTrouble()).orElse(""));
-            })
-        .orElseGet(
-            () ->
-                new SolvePanel(
-                    "idle",
-                    0,
-                    1,
-                    BigDecimal.ZERO,
-                    0,
-                    "",
-                    Optional.empty(),
-                    Optional.empty(),
-                    List.of(),
-                    ""));
+  private static SolvePanel panel(Record row, Instant now) {
+    String state = row.get(SOLVE_RUN.STATE);
+    boolean underWay = state.equals("running") || state.equals("waiting");
+    boolean lost = underWay && row.get(SOLVE_RUN.BEAT_AT).isBefore(now.minus(SolveRuns.SILENCE));
+    return new SolvePanel(
+        lost ? "interrupted" : state,
+        row.get(SOLVE_RUN.ID),
+        row.get(SOLVE_RUN.SEED),
+        Optional.ofNullable(row.get(SOLVE_RUN.ELAPSED_SECONDS)).orElse(BigDecimal.ZERO),
+        row.get(SOLVE_RUN.WANTED_SECONDS),
+        Optional.ofNullable(row.get(SOLVE_RUN.STAGE)).orElse(""),
+        score(
+            row.get(SOLVE_RUN.FIRST_BREACHES),
+            row.get(SOLVE_RUN.FIRST_GAPS),
+            row.get(SOLVE_RUN.FIRST_STRAIN)),
+        score(
+            row.get(SOLVE_RUN.BEST_BREACHES),
+            row.get(SOLVE_RUN.BEST_GAPS),
+            row.get(SOLVE_RUN.BEST_STRAIN)),
+        Optional.ofNullable(row.get(SOLVE_RUN.STILL_WRONG)).orElse("").lines().toList(),
+        lost ? "restart" : Optional.ofNullable(row.get(SOLVE_RUN.TROUBLE)).orElse(""));
   }
 
   /**
@@ -292,7 +297,7 @@ public final class PlanningReads {
           if (draft.isEmpty()) {
             return Optional.empty();
           }
-          Frame frame = TicketReads.frame(tx, event.id());
+          Frame frame = drafts.frame();
           LocalDate today = tx.now().atZone(event.zone()).toLocalDate();
           List<Ticket> all = tickets(tx, draft.get().planId(), frame);
           Optional<Ticket> wanted =
@@ -373,11 +378,12 @@ public final class PlanningReads {
   public Optional<PublishPage> publishPage(EventName event, Optional<Integer> number) {
     return database.read(
         tx -> {
-          Optional<DraftRow> draft = drafts(tx, event).chosen(number);
+          Drafts drafts = drafts(tx, event);
+          Optional<DraftRow> draft = drafts.chosen(number);
           if (draft.isEmpty() || draft.get().score().isEmpty()) {
             return Optional.empty();
           }
-          Frame frame = TicketReads.frame(tx, event.id());
+          Frame frame = drafts.frame();
           Map<Long, Map<String, Set<Object>>> days = commitments(tx, event, draft.get().planId());
           Map<String, Set<Object>> here = days.getOrDefault(draft.get().planId(), Map.of());
           Map<String, Set<Object>> out =

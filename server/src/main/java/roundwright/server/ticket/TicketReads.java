@@ -1,6 +1,7 @@
 package roundwright.server.ticket;
 
 import static org.jooq.impl.DSL.field;
+import static org.jooq.impl.DSL.inline;
 import static org.jooq.impl.DSL.multiset;
 import static org.jooq.impl.DSL.select;
 import static org.jooq.impl.DSL.selectCount;
@@ -153,6 +154,14 @@ public final class TicketReads {
 
   /** The event's frame, in one query. */
   public static Frame frame(Tx tx, EventId event) {
+    return frame(tx, event, inline(0)).frame();
+  }
+
+  /** A frame, and what was read along with it. */
+  public record With<T>(Frame frame, T more) {}
+
+  /** The event's frame and one column more, in one query. */
+  public static <T> With<T> frame(Tx tx, EventId event, Field<T> more) {
     long id = event.number();
     return tx.sql()
         .select(
@@ -233,8 +242,21 @@ public final class TicketReads {
                         .where(PIN.EVENT_ID.eq(id))
                         .and(PIN.KIND.eq("group")))
                 .convertFrom(
-                    rows -> Set.copyOf(rows.map(row -> row.value1() + "/" + row.value2()))))
-        .fetchSingle(org.jooq.Records.mapping(Frame::new));
+                    rows -> Set.copyOf(rows.map(row -> row.value1() + "/" + row.value2()))),
+            more)
+        .fetchSingle(
+            row ->
+                new With<>(
+                    new Frame(
+                        row.value1(),
+                        row.value2(),
+                        row.value3(),
+                        row.value4(),
+                        row.value5(),
+                        row.value6(),
+                        row.value7(),
+                        row.value8()),
+                    row.value9()));
   }
 
   private static List<HallRow> halls(

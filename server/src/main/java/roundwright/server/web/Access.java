@@ -69,9 +69,15 @@ public final class Access {
   /** To be run before every matched handler. */
   public void check(Context ctx) {
     Set<RouteRole> roles = ctx.routeRoles();
+    boolean nobodyAsks = roles.contains(Role.PUBLIC) && pathPart(ctx, "event").isEmpty();
     Visitor visitor =
-        visitors.find(
-            sessionToken(ctx), linkTokens(ctx), pathPart(ctx, "event"), pathPart(ctx, "person"));
+        nobodyAsks
+            ? Visitor.NOBODY
+            : visitors.find(
+                sessionToken(ctx),
+                linkTokens(ctx),
+                pathPart(ctx, "event"),
+                pathPart(ctx, "person"));
     ctx.attribute(VISITOR, visitor);
     if (!roles.contains(Role.PUBLIC)) {
       ctx.header("Cache-Control", "no-store");

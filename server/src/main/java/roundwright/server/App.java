@@ -23,6 +23,7 @@ import roundwright.server.account.AccountWrites;
 import roundwright.server.editions.EditionReads;
 import roundwright.server.editions.EditionRoutes;
 import roundwright.server.event.EventReads;
+import roundwright.server.event.EventRoutes;
 import roundwright.server.planning.PlanningReads;
 import roundwright.server.planning.PlanningRoutes;
 import roundwright.server.planning.PlanningWrites;
@@ -68,6 +69,7 @@ public final class App implements AutoCloseable {
     this.accountWrites = new AccountWrites(database);
     Access access = new Access(accountReads, cookies);
     AccountRoutes account = new AccountRoutes(accountReads, accountWrites, access, html, clock);
+    EventRoutes event = new EventRoutes(database);
     EditionRoutes edition =
         new EditionRoutes(
             new EditionReads(database),
@@ -98,6 +100,7 @@ public final class App implements AutoCloseable {
             get("/events/{event}/people/{person}", edition::showFound, PUBLIC),
             get("/events/{event}/my/{person}", edition::showPocket, PERSON),
             get("/events/{event}/halls/{hall}", edition::showBoard, PUBLIC),
+            get("/events/{event}/event.json", event::export, ORGANISER),
             get("/events/{event}/plan", planning::showPlan, ORGANISER),
             post("/events/{event}/drafts", planning::makeDraft, ORGANISER),
             get("/events/{event}/solve", planning::showSolve, ORGANISER),

@@ -8,6 +8,7 @@ import java.util.Optional;
 import java.util.concurrent.Callable;
 import java.util.concurrent.CountDownLatch;
 import picocli.CommandLine.Command;
+import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Model.CommandSpec;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Spec;
@@ -33,15 +34,7 @@ final class ServeCommand implements Callable<Integer> {
       defaultValue = "" + Settings.DEFAULT_PORT)
   private int port;
 
-  @Option(
-      names = "--database",
-      paramLabel = "FILE|URL",
-      description =
-          "File of the embedded database, or a jdbc:postgresql: address with user and password in"
-              + " ROUNDWRIGHT_DATABASE_USER and ROUNDWRIGHT_DATABASE_PASSWORD (default:"
-              + " ${DEFAULT-VALUE}).",
-      defaultValue = "roundwright")
-  private String database;
+  @Mixin private DatabaseOptions database;
 
   @Option(
       names = "--public-address",
@@ -59,15 +52,14 @@ final class ServeCommand implements Callable<Integer> {
 
   @Override
   public Integer call() throws IOException, InterruptedException {
-    boolean jdbc = database.startsWith("jdbc:");
     Settings settings =
         new Settings(
             host,
             port,
             Optional.ofNullable(publicAddress),
-            jdbc ? database : Settings.h2Url(Path.of(database)),
-            environment("ROUNDWRIGHT_DATABASE_USER", "sa"),
-            environment("ROUNDWRIGHT_DATABASE_PASSWORD", ""),
+            database.url(),
+            database.user(),
+            database.password(),
             devRoot == null ? Optional.empty() : Optional.of(devRoot.toRealPath()),
             5,
             600);
@@ -96,10 +88,5 @@ final class ServeCommand implements Callable<Integer> {
             "stopping");
     Runtime.getRuntime().addShutdownHook(stopping);
     asked.await();
-  }
-
-  private static String environment(String name, String otherwise) {
-    String set = System.getenv(name);
-    return set == null ? otherwise : set;
   }
 }

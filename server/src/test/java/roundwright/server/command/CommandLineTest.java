@@ -309,4 +309,33 @@ final class CommandLineTest {
     lines.stop();
     assertTrue(lines.stopWanted());
   }
+
+  @Test
+  void an_event_is_brought_in_once_under_a_name() throws IOException {
+    Path event = Files.writeString(folder.resolve("event.json"), EVENT);
+    Path database = folder.resolve("database");
+    Outcome first = run("import", event, "--as", "evening", "--database", database);
+    assertEquals(0, first.code(), first.err());
+    assertTrue(first.out().contains("Evening is in, with 4 people"), first.out());
+    Outcome second = run("import", event, "--as", "evening", "--database", database);
+    assertEquals(2, second.code());
+    assertTrue(second.err().contains("Choose another address"), second.err());
+    Outcome named = run("import", event, "--as", "Evening!", "--database", database);
+    assertEquals(2, named.code());
+    assertTrue(named.err().contains("small letters, digits and hyphens"), named.err());
+    Outcome missing = run("import", folder.resolve("none"), "--as", "x", "--database", database);
+    assertTrue(missing.err().contains("there is no such file"), missing.err());
+  }
+
+  @Test
+  void a_folder_of_tables_is_brought_in_and_its_mistakes_are_named() throws IOException {
+    Path database = folder.resolve("database");
+    Outcome good = run("import", "../demo-event", "--as", "demo", "--database", database);
+    assertEquals(0, good.code(), good.err());
+    Path tables = Files.createDirectory(folder.resolve("tables"));
+    Files.writeString(tables.resolve("event.csv"), "name,zone\nX,Nowhere\n");
+    Outcome bad = run("import", tables, "--as", "bad", "--database", database);
+    assertEquals(2, bad.code());
+    assertTrue(bad.err().contains("event.csv"), bad.err());
+  }
 }

@@ -88,6 +88,11 @@ class EveryPageTest {
     chromium.setScreen(NARROWEST);
     chromium.open(QUILLHAVEN.address(sample));
     wrong.addAll(sidewaysScroll(NARROWEST));
+    if (sample.forPhones()) {
+      chromium.setScreen(SCREENS.get(0));
+      chromium.ask("document.documentElement.style.fontSize = '200%'; return null");
+      sidewaysScroll(SCREENS.get(0)).forEach(line -> wrong.add("at twice the text: " + line));
+    }
     assertEquals("", String.join("\n", wrong));
   }
 

@@ -9,6 +9,7 @@ import com.fasterxml.jackson.databind.json.JsonMapper;
 import java.time.Duration;
 import java.util.LinkedHashSet;
 import java.util.List;
+import java.util.Map;
 import java.util.Set;
 import org.junit.jupiter.api.AfterEach;
 import org.junit.jupiter.api.BeforeEach;
@@ -139,6 +140,61 @@ class PathsTest {
   }
 
   @Test
+  void aMinorIsFoundByGivenNameOnly() {
+    chromium.setScreen(PHONE);
+    String event = QUILLHAVEN.root() + "/events/" + Quillhaven.SLUG;
+    chromium.open(event + "?name=Zawadi");
+    assertTrue(
+        chromium.driver().findElements(By.cssSelector(".found-list li")).stream()
+            .anyMatch(hit -> hit.getText().equals("Zawadi")),
+        find(".found").getText());
+    chromium.open(event + "?name=Bahariya");
+    assertTrue(
+        chromium.driver().findElements(By.cssSelector(".found-list li")).stream()
+            .noneMatch(hit -> hit.getText().contains("Zawadi")),
+        find(".found").getText());
+  }
+
+  @Test
+  void aBoardThatIsCutOffSaysSoAndComesBack() {
+    chromium.setScreen(LAPTOP);
+    chromium.open(QUILLHAVEN.root() + "/events/" + Quillhaven.SLUG + "/halls/great-floor");
+    refreshBoard();
+    assertTrue(find("main").getAttribute("class").contains("board"));
+    setOffline(true);
+    refreshBoard();
+    assertTrue(!find(".stale-word").isDisplayed(), "one lost answer is not the end");
+    refreshBoard();
+    assertTrue(find("main").getAttribute("class").contains("board-stale"));
+    assertTrue(find(".stale-word").getText().contains("10:41"), find(".stale-word").getText());
+    setOffline(false);
+    refreshBoard();
+    assertTrue(!find("main").getAttribute("class").contains("board-stale"));
+  }
+
+  /** What the page's script does by itself every 15 seconds. */
+  private void refreshBoard() {
+    chromium.driver().executeAsyncScript("refresh().then(arguments[0])");
+  }
+
+  private void setOffline(boolean offline) {
+    chromium.driver().executeCdpCommand("Network.enable", Map.of());
+    chromium
+        .driver()
+        .executeCdpCommand(
+            "Network.emulateNetworkConditions",
+            Map.of(
+                "offline",
+                offline,
+                "latency",
+                0,
+                "downloadThroughput",
+                -1,
+                "uploadThroughput",
+                -1));
+  }
+
+  @Test
   void everythingAnOrganiserDoesCanBeDoneByKeyboard() {
     chromium.setScreen(LAPTOP);
     signIn();
@@ -164,7 +220,7 @@ class PathsTest {
     chromium.takeCookies(QUILLHAVEN.root(), QUILLHAVEN.browserOf(sample));
     chromium.open("about:blank");
     chromium.setScreen(PHONE);
-    chromium.driver().executeCdpCommand("Network.clearBrowserCache", java.util.Map.of());
+    chromium.driver().executeCdpCommand("Network.clearBrowserCache", Map.of());
     chromium.networkLog();
     chromium.open(QUILLHAVEN.address(sample));
     Traffic first = traffic();

@@ -67,6 +67,7 @@ class PathsTest {
     type("name", Served.HOST_NAME);
     type("password", Served.HOST_PASSWORD);
     find(".form .button-main").click();
+    patiently().until(ExpectedConditions.urlContains("/events"));
   }
 
   @Test

@@ -34,6 +34,7 @@ record Sample(String name, String route, String path, Viewer viewer, int status)
           "/", // leads to the list of events
           "/health",
           "/static/<name>",
+          "/events/{event}/event.json", // a file
           "/link/{token}", // leads to the pocket page
           "/events/{event}/solve"); // a part of the day plan, for scripts only
 

@@ -8,6 +8,7 @@ import java.util.ArrayList;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import org.jooq.TableRecord;
 import roundwright.scheduling.cost.Cost;
 import roundwright.scheduling.cost.Finding;
@@ -91,6 +92,14 @@ final class PlanRows {
         .set(PLAN.STRAIN, score == null ? null : rounded(score.strain()))
         .returning(PLAN.ID)
         .fetchSingle(PLAN.ID);
+  }
+
+  /** What a plan scored, where it has been priced. */
+  static Optional<Cost> score(Tx tx, long plan) {
+    return tx.sql()
+        .fetchOptional(PLAN, PLAN.ID.eq(plan))
+        .filter(row -> row.getBreaches() != null)
+        .map(row -> new Cost(row.getBreaches(), row.getGaps(), row.getStrain()));
   }
 
   private static PlanGroupRecord row(

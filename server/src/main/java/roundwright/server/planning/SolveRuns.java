@@ -383,11 +383,15 @@ public final class SolveRuns implements AutoCloseable {
       database.change(
           tx -> {
             write(tx);
+            if (worseThanDraft(tx, snapshot, plan)) {
+              end(tx, id, outcome(), "no-better");
+              return;
+            }
             boolean kept =
                 PlanningWrites.replacePlan(
                     tx, draft, snapshot.draftVersion(), snapshot.event(), plan, account);
             if (kept) {
-              end(tx, id, stopWanted() ? "stopped" : "done", "");
+              end(tx, id, outcome(), "");
             } else {
               // The draft was changed meanwhile: what was found becomes a draft of its own.
               long planId = PlanRows.insert(tx, draft.event(), snapshot.event(), plan);
@@ -396,6 +400,20 @@ public final class SolveRuns implements AutoCloseable {
             }
             plan.score().ifPresent(score -> writeScore(tx, score, plan));
           });
+    }
+
+    private String outcome() {
+      return stopWanted() ? "stopped" : "done";
+    }
+
+    /** A short search must not put a worse plan in the place of the one that a long one found. */
+    private boolean worseThanDraft(Tx tx, Snapshot snapshot, Plan plan) {
+      DraftRecord row = PlanningWrites.row(tx, draft);
+      Optional<Cost> before = PlanRows.score(tx, row.getPlanId());
+      return row.getVersion() == snapshot.draftVersion()
+          && before.isPresent()
+          && plan.score().isPresent()
+          && plan.score().get().compareTo(before.get()) > 0;
     }
 
     /** The auditor's price, which is the one that counts. */

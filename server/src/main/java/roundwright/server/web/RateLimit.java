@@ -3,6 +3,7 @@ package roundwright.server.web;
 import java.time.Clock;
 import java.util.Map;
 import java.util.concurrent.ConcurrentHashMap;
+import java.util.concurrent.atomic.AtomicBoolean;
 
 /**
  * So many askings a client at once, and so many more a second after that (a token bucket). Wide
@@ -30,16 +31,15 @@ public final class RateLimit {
     if (buckets.size() > MOST_CLIENTS) {
       buckets.entrySet().removeIf(bucket -> refilled(bucket.getValue(), now) >= atOnce);
     }
-    Bucket after =
-        buckets.compute(
-            client,
-            (name, bucket) ->
-                new Bucket((bucket == null ? atOnce : refilled(bucket, now)) - 1, now));
-    if (after.left() < 0) {
-      buckets.put(client, new Bucket(0, now));
-      return false;
-    }
-    return true;
+    AtomicBoolean allowed = new AtomicBoolean();
+    buckets.compute(
+        client,
+        (name, bucket) -> {
+          double left = bucket == null ? atOnce : refilled(bucket, now);
+          allowed.set(left >= 1);
+          return new Bucket(left >= 1 ? left - 1 : left, now);
+        });
+    return allowed.get();
   }
 
   private double refilled(Bucket bucket, long now) {

@@ -10,6 +10,7 @@ import static roundwright.server.store.schema.Tables.PERSON;
 import static roundwright.server.store.schema.Tables.PLAN;
 
 import java.io.IOException;
+import java.math.BigDecimal;
 import java.nio.file.Path;
 import java.time.LocalDate;
 import java.time.ZoneId;
@@ -24,6 +25,7 @@ import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.io.TempDir;
 import roundwright.scheduling.Effort;
 import roundwright.scheduling.Progress;
+import roundwright.scheduling.cost.Cost;
 import roundwright.scheduling.file.EventFile;
 import roundwright.scheduling.file.FileProblems;
 import roundwright.scheduling.model.Event;
@@ -205,6 +207,26 @@ class PlanAndPublishTest {
       Thread.sleep(20);
     }
     throw new AssertionError("The search did not end");
+  }
+
+  @Test
+  void a_search_that_finds_a_worse_plan_leaves_the_better_one() {
+    planned();
+    List<Ticket> before = page().lanes().down();
+    Search worse =
+        (event, effort, progress) -> {
+          Plan plan = PlainSearch.plan(event, effort, progress);
+          return new Plan(
+              plan.groups().subList(0, 3),
+              Optional.of(new Cost(0, 10_000, BigDecimal.ZERO)),
+              plan.findings());
+        };
+    try (SolveRuns hasty = new SolveRuns(database, worse, EventReads::event)) {
+      hasty.ask(first, 1, 5, Optional.empty(), Optional.empty());
+      assertEquals("no-better", ended().trouble());
+    }
+    assertEquals(before, page().lanes().down());
+    assertEquals(1, page().draft().version());
   }
 
   @Test

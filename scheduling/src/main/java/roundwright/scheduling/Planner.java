@@ -127,7 +127,7 @@ public final class Planner {
     boolean enough = best.hard == 0 && attempts >= ENOUGH_DAY_PLANS;
     return enough
         || spending.over()
-        || spending.used() > (best.hard == 0 ? DAY_PLANS_UNTIL : DAY_PLANS_UNTIL_IF_BROKEN);
+        || spending.usedTime() > (best.hard == 0 ? DAY_PLANS_UNTIL : DAY_PLANS_UNTIL_IF_BROKEN);
   }
 
   /**

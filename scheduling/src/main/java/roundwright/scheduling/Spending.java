@@ -32,10 +32,6 @@ final class Spending {
     return effort.seconds().isPresent() ? elapsedSeconds() / effort.seconds().getAsDouble() : 0;
   }
 
-  double used() {
-    return usedTime();
-  }
-
   boolean over() {
     return usedTime() >= 1 || progress.stopWanted();
   }

@@ -31,10 +31,6 @@ final class Refill {
     count = 0;
   }
 
-  int count() {
-    return count;
-  }
-
   int place(int at) {
     return places[at];
   }

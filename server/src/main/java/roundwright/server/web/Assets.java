@@ -47,7 +47,7 @@ public final class Assets {
   }
 
   /** A script that comes with a library. */
-  private record Vendored(String library, String file) {}
+  private record Vendored(String webjar, String file) {}
 
   private static final class Asset {
     final byte[] content;
@@ -171,9 +171,9 @@ public final class Assets {
     if (vendored != null) {
       return resource(
           "META-INF/resources/webjars/"
-              + vendored.library()
+              + vendored.webjar()
               + "/"
-              + version(vendored.library())
+              + version(vendored.webjar())
               + "/"
               + vendored.file());
     }
@@ -184,12 +184,12 @@ public final class Assets {
     return resource("static/" + name);
   }
 
-  private static String version(String library) throws IOException {
+  private static String version(String webjar) throws IOException {
     Properties pom = new Properties();
     try (InputStream in =
-        resource("META-INF/maven/org.webjars.npm/" + library + "/pom.properties")) {
+        resource("META-INF/maven/org.webjars.npm/" + webjar + "/pom.properties")) {
       if (in == null) {
-        throw new IOException("The jar does not say which version of " + library + " it holds");
+        throw new IOException("The jar does not say which version of " + webjar + " it holds");
       }
       pom.load(in);
     }

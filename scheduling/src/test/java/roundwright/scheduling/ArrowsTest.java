@@ -25,17 +25,18 @@ final class ArrowsTest {
   private static final String ROOT = "roundwright.scheduling";
   private static final Map<String, List<String>> ARROWS =
       new TreeMap<>(
-          Map.of(
-              "cost", List.of(),
-              "model", List.of("cost"),
-              "file", List.of("model"),
-              "audit", List.of("model", "cost"),
-              "forecast", List.of("model"),
-              "flow", List.of(),
-              "core", List.of("model"),
-              "rules", List.of("core", "cost"),
-              "timetable", List.of("core", "rules", "forecast"),
-              "crewing", List.of("rules", "flow")));
+          Map.ofEntries(
+              Map.entry("cost", List.of()),
+              Map.entry("model", List.of("cost")),
+              Map.entry("file", List.of("model")),
+              Map.entry("audit", List.of("model", "cost")),
+              Map.entry("forecast", List.of("model")),
+              Map.entry("flow", List.of()),
+              Map.entry("core", List.of("model")),
+              Map.entry("rules", List.of("core", "cost")),
+              Map.entry("timetable", List.of("core", "rules", "forecast")),
+              Map.entry("crewing", List.of("rules", "flow")),
+              Map.entry("advice", List.of("crewing", "flow", "audit"))));
 
   private static final JavaClasses CLASSES =
       new ClassFileImporter()

@@ -5,6 +5,7 @@ import java.io.PrintWriter;
 import java.math.BigDecimal;
 import java.nio.file.Path;
 import java.util.EnumMap;
+import java.util.List;
 import java.util.Locale;
 import java.util.Map;
 import java.util.Optional;
@@ -21,6 +22,7 @@ import picocli.CommandLine.Parameters;
 import picocli.CommandLine.Spec;
 import roundwright.scheduling.Effort;
 import roundwright.scheduling.Planner;
+import roundwright.scheduling.advice.Impossible;
 import roundwright.scheduling.cost.Cost;
 import roundwright.scheduling.cost.Finding;
 import roundwright.scheduling.cost.Level;
@@ -38,6 +40,7 @@ import roundwright.scheduling.model.Plan;
     description = {
       "Decides when and where each group solves, who is in it and who is on its",
       "crew.",
+      "What no plan can do is said before the search begins.",
       "Press Ctrl-C to stop early and keep the best plan so far."
     },
     exitCodeListHeading = "%nExit codes:%n",
@@ -51,6 +54,7 @@ final class PlanCommand implements Callable<Integer> {
   private static final double DEFAULT_SECONDS = 10;
   private static final double MOST_SECONDS = 86_400;
   private static final int MOST_THREADS = 64;
+  private static final int MOST_WARNINGS = 12;
   private static final long STOP_PATIENCE_SECONDS = 30;
 
   @Parameters(paramLabel = "EVENT.json", description = "The event file.")
@@ -97,6 +101,7 @@ final class PlanCommand implements Callable<Integer> {
     Event event = Given.event(eventFile);
     Refusal.unlessWritable(planFile);
     PrintWriter out = spec.commandLine().getOut();
+    warn(event, out);
     ProgressLines progress = new ProgressLines(out, ProgressLines.isTerminal());
     CountDownLatch written = new CountDownLatch(1);
     Thread stopping = new Thread(() -> stopAndWait(progress, written), "stopping");
@@ -111,6 +116,25 @@ final class PlanCommand implements Callable<Integer> {
       written.countDown();
       forget(stopping);
     }
+  }
+
+  /** What no plan can do is said at once, so that nobody waits for it. */
+  private void warn(Event event, PrintWriter out) {
+    List<Impossible> impossible = Impossible.of(event);
+    if (impossible.isEmpty()) {
+      return;
+    }
+    out.println("Whatever is planned, some of this cannot be done:");
+    impossible.stream().limit(MOST_WARNINGS).forEach(one -> out.println("  " + one.says()));
+    if (impossible.size() > MOST_WARNINGS) {
+      out.println(
+          "  and "
+              + (impossible.size() - MOST_WARNINGS)
+              + " more; see them all: roundwright advise "
+              + eventFile);
+    }
+    out.println("The search goes on for the best plan there is.");
+    out.flush();
   }
 
   private Effort effort() throws Refusal {

@@ -20,6 +20,7 @@ import picocli.CommandLine.Spec;
       PlanCommand.class,
       CheckCommand.class,
       ForecastCommand.class,
+      AdviseCommand.class,
       ImportCommand.class,
       ServeCommand.class,
       DemoCommand.class

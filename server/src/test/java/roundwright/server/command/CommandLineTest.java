@@ -113,6 +113,24 @@ final class CommandLineTest {
   }
 
   @Test
+  void what_no_plan_can_do_is_said_before_the_search_and_by_advise() throws IOException {
+    Path event = file("event.json", without(EVENT, ", \"crew\": {\"scrambles\": [\"cube3\"]}"));
+    String says =
+        "Nobody can scramble 3x3x3, and a group of 3x3x3 round 1 needs 1 at once; find 1 person"
+            + " more who can, or teach somebody.";
+    Outcome planned = run("plan", event, "--out", folder.resolve("plan.json"), "--steps", 2000);
+    assertEquals(3, planned.code(), planned.err());
+    int said = planned.out().indexOf("  " + says);
+    assertTrue(said > 0 && said < planned.out().indexOf("Wrote "), planned.out());
+    Outcome advised = run("advise", event);
+    assertEquals(1, advised.code(), advised.err());
+    assertTrue(advised.out().contains("  " + says), advised.out());
+    Outcome fine = run("advise", file("fine.json", EVENT));
+    assertEquals(0, fine.code(), fine.err());
+    assertTrue(fine.out().startsWith("Nothing is known"), fine.out());
+  }
+
+  @Test
   void a_file_with_three_mistakes_gives_three_lines_and_plans_nothing() throws IOException {
     Path event =
         file(
@@ -247,7 +265,7 @@ final class CommandLineTest {
   }
 
   @ParameterizedTest
-  @ValueSource(strings = {"", "plan", "check", "forecast", "serve"})
+  @ValueSource(strings = {"", "plan", "check", "forecast", "advise", "serve"})
   void each_command_helps_and_ends_well(String command) {
     Outcome help = command.isEmpty() ? run("--help") : run(command, "--help");
     assertEquals(0, help.code());

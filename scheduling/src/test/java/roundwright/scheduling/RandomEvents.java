@@ -11,6 +11,7 @@ import roundwright.scheduling.cost.RuleName;
 
 /** Events made by chance from a seed, through the file format, so that each is a good file. */
 public final class RandomEvents {
+  private static final int LARGE = 1000;
   private static final List<String> COUNTED_BY =
       List.of("average-of-5", "mean-of-3", "best-of-5", "best-of-3", "best-of-2", "best-of-1");
   private static final List<String> ZONES =
@@ -307,7 +308,7 @@ public final class RandomEvents {
       for (int day = 1; day <= days; day++) {
         open[day - 1] = day + "/09:00-" + day + "/19:00";
       }
-      scene.hall("h" + h, Math.max(8, between(14, 24))).open(open);
+      scene.hall("h" + h, peopleCount < LARGE ? between(14, 24) : between(28, 44)).open(open);
       if (h == hallCount - 1) {
         scene.set("features", List.of("quiet"));
       }

@@ -22,6 +22,13 @@ public final class Board {
   public final int[] filled;
   public final long[] workInAll;
   public final int[] attemptsInAll;
+
+  /** Of each group: its least minutes, or -1 where somebody came or went since they were asked. */
+  final int[] leastMinutes;
+
+  /** Of each person: how far in all their groups are from where the seeding wants them. */
+  public final int[] placesAway;
+
   public final long[] taken;
   public final long[] solves;
 
@@ -48,6 +55,9 @@ public final class Board {
     filled = new int[frame.groups * 3];
     workInAll = new long[frame.groups];
     attemptsInAll = new int[frame.groups];
+    leastMinutes = new int[frame.groups];
+    Arrays.fill(leastMinutes, -1);
+    placesAway = new int[problem.people];
     taken = new long[problem.people * frame.words];
     solves = new long[problem.people * frame.words];
     members = new int[frame.groups][];
@@ -72,6 +82,8 @@ public final class Board {
       memberAt[last] = memberAt[seat];
       workInAll[before] -= problem.pace.workMicros[seat];
       attemptsInAll[before] -= problem.pace.attempts[seat];
+      leastMinutes[before] = -1;
+      placesAway[person] -= Math.abs(frame.place[before] - frame.wantedPlace[seat]);
       countKin(person, before, kinSolving, kinJudging, -1);
       drop(person, before << 2 | Problem.SOLVING);
     }
@@ -81,6 +93,8 @@ public final class Board {
       members[group][size[group]++] = seat;
       workInAll[group] += problem.pace.workMicros[seat];
       attemptsInAll[group] += problem.pace.attempts[seat];
+      leastMinutes[group] = -1;
+      placesAway[person] += Math.abs(frame.place[group] - frame.wantedPlace[seat]);
       countKin(person, group, kinSolving, kinJudging, 1);
       add(person, group << 2 | Problem.SOLVING);
     }

@@ -30,6 +30,15 @@ public final class Frame {
   public final int[] end;
   public final int[] date;
 
+  /** Of each group: its round's discipline. */
+  public final int[] discipline;
+
+  /** Whether groups in order of time are in order of date: not so where zones differ. */
+  public final boolean datesInOrder;
+
+  /** The longest way in minutes between two halls with groups. */
+  public final int longestWay;
+
   /** Place within the round, 0 and up, by start and then hall. */
   public final int[] place;
 
@@ -59,11 +68,20 @@ public final class Frame {
   /** Of each seat: the place 0 and up within its round that the seeding wants. */
   public final int[] wantedPlace;
 
+  /** Of each group: most people it may hold with its stations in use. */
+  public final int[] mostPeople;
+
   /** Of each group: its part of the round's entrants by stations in use. */
   public final double[] fairSize;
 
   public final int[][] mealFrom;
   public final int[][] mealTo;
+
+  /**
+   * Of each group and meal: whether the day plan itself leaves everybody the time for it, who is
+   * not busy.
+   */
+  public final boolean[][] mealLeft;
 
   public Frame(Problem problem, List<Slot> slots) {
     this.problem = problem;
@@ -88,7 +106,20 @@ public final class Frame {
     earliestOfSeveral = new boolean[groups];
     mealFrom = new int[groups][];
     mealTo = new int[groups][];
+    mealLeft = new boolean[groups][];
+    discipline = Arrays.stream(round).map(r -> problem.roundDiscipline[r]).toArray();
     layOutGroups();
+    layOutMeals();
+    boolean inOrder = true;
+    int longest = 0;
+    for (int g = 0; g < groups; g++) {
+      inOrder &= g == 0 || date[g - 1] <= date[g];
+      for (int h : hall) {
+        longest = Math.max(longest, problem.way[hall[g]][h]);
+      }
+    }
+    datesInOrder = inOrder;
+    longestWay = longest;
     conflicts = new long[groups * words];
     layOutConflicts();
     free = new long[problem.people * words];
@@ -115,8 +146,10 @@ public final class Frame {
     for (int seat = 0; seat < problem.seats; seat++) {
       wantedPlace[seat] = seededPlace(seat);
     }
+    mostPeople = new int[groups];
     fairSize = new double[groups];
     for (int g = 0; g < groups; g++) {
+      mostPeople[g] = problem.largestSize(round[g], stations[g]);
       int inUse = 0;
       for (int other : groupsOf[round[g]]) {
         inUse += stations[other];
@@ -156,6 +189,33 @@ public final class Frame {
         earliestOfSeveral[groupsOf[r][0]] = true;
       }
     }
+  }
+
+  private void layOutMeals() {
+    List<Rules.Meal> meals = problem.event.rules().meals();
+    for (int g = 0; g < groups; g++) {
+      mealLeft[g] = new boolean[meals.size()];
+      for (int m = 0; m < meals.size(); m++) {
+        boolean asBefore =
+            g > 0 && mealFrom[g - 1][m] == mealFrom[g][m] && mealTo[g - 1][m] == mealTo[g][m];
+        mealLeft[g][m] =
+            asBefore
+                ? mealLeft[g - 1][m]
+                : leavesStretch(mealFrom[g][m], mealTo[g][m], meals.get(m).minutes());
+      }
+    }
+  }
+
+  /** Whether some stretch of that many minutes meets no group at all. */
+  private boolean leavesStretch(int from, int to, int minutes) {
+    int freeSince = from;
+    for (int g = 0; g < groups; g++) {
+      if (Math.min(start[g], to) - freeSince >= minutes) {
+        return true;
+      }
+      freeSince = Math.max(freeSince, end[g]);
+    }
+    return to - freeSince >= minutes;
   }
 
   private void layOutConflicts() {

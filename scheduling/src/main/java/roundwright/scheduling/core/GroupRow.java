@@ -33,6 +33,13 @@ public final class GroupRow {
 
   /** The least minutes the group takes with the crew it wants. */
   public int leastMinutes() {
+    if (board.leastMinutes[group] < 0) {
+      board.leastMinutes[group] = leastMinutesAnew();
+    }
+    return board.leastMinutes[group];
+  }
+
+  private int leastMinutesAnew() {
     long longest = 0;
     for (int i = 0; i < size; i++) {
       longest =

@@ -85,6 +85,10 @@ public final class Problem {
   public final boolean[] judges;
   public final boolean[] runs;
   public final boolean[][] scrambles;
+
+  /** Of each person and discipline: a bit for each role they could take in its groups. */
+  public final byte[] skills;
+
   public final int[][] personSeats;
 
   public final int disciplines;
@@ -137,6 +141,13 @@ public final class Problem {
     runs = new boolean[people];
     scrambles = new boolean[disciplines][people];
     households = layOutPeople();
+    skills = new byte[people * disciplines];
+    for (int p = 0; p < people; p++) {
+      for (int d = 0; d < disciplines; d++) {
+        int bits = (judges[p] ? 1 : 0) | (scrambles[d][p] ? 2 : 0) | (runs[p] ? 4 : 0);
+        skills[p * disciplines + d] = (byte) bits;
+      }
+    }
 
     roundList = new ArrayList<>(event.rounds());
     roundList.sort(Comparator.comparing(Round::id));
@@ -408,11 +419,7 @@ public final class Problem {
   }
 
   public boolean skilled(int person, int round, int role) {
-    return switch (role) {
-      case 0 -> judges[person];
-      case 1 -> scrambles[roundDiscipline[round]][person];
-      default -> runs[person];
-    };
+    return (skills[person * disciplines + roundDiscipline[round]] >> role & 1) != 0;
   }
 
   /** Whether one of the person's windows holds the whole stretch. */

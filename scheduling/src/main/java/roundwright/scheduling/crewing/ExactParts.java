@@ -240,7 +240,7 @@ final class ExactParts {
   }
 
   private long[] sizeCosts(int g, int rows) {
-    int capacity = problem.largestSize(frame.round[g], frame.stations[g]);
+    int capacity = frame.mostPeople[g];
     long[] costs = new long[rows];
     for (int size = 0; size < rows; size++) {
       costs[size] = unevenPrice(g, size + 1) - unevenPrice(g, size);

@@ -130,7 +130,7 @@ final class Untangling {
       if (choice[i] != board.seatGroup[own[i]]) {
         int from = board.seatGroup[own[i]];
         refill.reseat(own[i], choice[i]);
-        int most = problem.largestSize(frame.round[choice[i]], frame.stations[choice[i]]);
+        int most = frame.mostPeople[choice[i]];
         if (from >= 0 && board.size[choice[i]] > most) {
           sendBack(choice[i], from, own[i]);
         }

@@ -49,7 +49,7 @@ final class GroupRules {
     @Override
     public long price(GroupRow row) {
       int most = row.problem.mostStations[row.round][row.frame.hall[row.group]];
-      return (long) Math.max(0, row.size - row.problem.largestSize(row.round, row.stations))
+      return (long) Math.max(0, row.size - row.frame.mostPeople[row.group])
           + Math.max(0, row.stations - most);
     }
   }

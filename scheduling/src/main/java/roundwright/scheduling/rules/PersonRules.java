@@ -1,8 +1,6 @@
 package roundwright.scheduling.rules;
 
 import java.util.List;
-import roundwright.scheduling.core.Board;
-import roundwright.scheduling.core.Frame;
 import roundwright.scheduling.core.PersonRow;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.cost.RuleName;
@@ -46,11 +44,7 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
-      int seated = 0;
-      for (int i = 0; i < row.count; i++) {
-        seated += row.solving(i) ? 1 : 0;
-      }
-      return (long) FOR_EACH * (row.problem.personSeats[row.person].length - seated);
+      return (long) FOR_EACH * (row.problem.personSeats[row.person].length - row.solvingCount);
     }
   }
 
@@ -63,6 +57,9 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
+      if (!row.tight && !row.hindered) {
+        return 0;
+      }
       int[] busyFrom = row.problem.busyFrom[row.person];
       int[] busyTo = row.problem.busyTo[row.person];
       long found = 0;
@@ -80,21 +77,13 @@ final class PersonRules {
     }
 
     private static boolean collidesWithEarlier(PersonRow row, int at) {
-      int group = row.group[at];
-      if (at > 0 && row.group[at - 1] == group) {
-        return true;
-      }
-      Frame frame = row.frame;
-      int last = group >>> 6;
-      int mine = row.person * frame.words;
-      int theirs = group * frame.words;
-      for (int w = 0; w < last; w++) {
-        if ((row.board.taken[mine + w] & frame.conflicts[theirs + w]) != 0) {
+      int[] ways = row.problem.way[row.hall[at]];
+      for (int i = at - 1; i >= 0; i--) {
+        if (row.start[at] < row.end[i] + ways[row.hall[i]]) {
           return true;
         }
       }
-      long earlier = (1L << group) - 1;
-      return (row.board.taken[mine + last] & frame.conflicts[theirs + last] & earlier) != 0;
+      return false;
     }
 
     private static boolean startsInBusy(PersonRow row, int at, int[] busyFrom, int[] busyTo) {
@@ -129,6 +118,9 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
+      if (!row.hindered) {
+        return 0;
+      }
       long found = 0;
       for (int i = 0; i < row.count; i++) {
         if (!merelyLikely(row, i) && away(row, i)) {
@@ -157,6 +149,9 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
+      if (!row.unskilled && !row.listedTwice) {
+        return 0;
+      }
       long found = 0;
       for (int i = 0; i < row.count; i++) {
         if (!row.solving(i) && (isLaterListing(row, i) || !skilled(row, i))) {
@@ -193,11 +188,7 @@ final class PersonRules {
     @Override
     public long price(PersonRow row) {
       int most = row.problem.maxDutyMinutes[row.person];
-      int inAll = 0;
-      for (int i = 0; i < row.count; i++) {
-        inAll += row.solving(i) ? 0 : row.end[i] - row.start[i];
-      }
-      if (inAll <= most) {
+      if (row.dutyMinutes <= most) {
         return 0;
       }
       long found = 0;
@@ -225,15 +216,7 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
-      Board board = row.board;
-      long away = 0;
-      for (int seat : row.problem.personSeats[row.person]) {
-        int group = board.seatGroup[seat];
-        if (group >= 0) {
-          away += Math.abs(row.frame.place[group] - row.frame.wantedPlace[seat]);
-        }
-      }
-      return away * weight;
+      return row.board.placesAway[row.person] * weight;
     }
   }
 
@@ -248,10 +231,7 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
-      long minutes = 0;
-      for (int i = 0; i < row.count; i++) {
-        minutes += row.solving(i) ? 0 : row.end[i] - row.start[i];
-      }
+      long minutes = row.dutyMinutes;
       return Math.round(
           minutes * minutes * (double) weight / MINUTES_SQUARED / row.problem.share[row.person]);
     }
@@ -304,6 +284,9 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
+      if (row.dutyMinutes <= longestRunMinutes) {
+        return 0;
+      }
       long over = 0;
       int duty = 0;
       int latestEnd = Problem.NEVER;
@@ -331,19 +314,7 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
-      long minutes = 0;
-      for (int i = 0; i < row.count; i++) {
-        if (row.firstOfDate(i)) {
-          int last = row.end[i];
-          for (int j = i + 1; j < row.count; j++) {
-            if (row.date[j] == row.date[i]) {
-              last = Math.max(last, row.end[j]);
-            }
-          }
-          minutes += last - row.start[i];
-        }
-      }
-      return minutes * weight / MINUTES_AN_HOUR;
+      return row.minutesOnSite * weight / MINUTES_AN_HOUR;
     }
   }
 
@@ -360,6 +331,9 @@ final class PersonRules {
     public long price(PersonRow row) {
       long found = 0;
       for (int i = 1; i < row.count; i++) {
+        if (row.hall[i - 1] == row.hall[i] && row.date[i - 1] == row.date[i]) {
+          continue;
+        }
         int before = i - 1;
         while (before >= 0 && row.date[before] != row.date[i]) {
           before--;
@@ -393,11 +367,12 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
+      boolean busy = row.problem.busyFrom[row.person].length > 0;
       long found = 0;
       for (int i = 0; i < row.count; i++) {
         if (row.firstOfDate(i)) {
           for (int m = 0; m < minutes.length; m++) {
-            if (goesWithout(row, i, m)) {
+            if ((busy || !row.frame.mealLeft[row.group[i]][m]) && goesWithout(row, i, m)) {
               found++;
             }
           }
@@ -501,6 +476,9 @@ final class PersonRules {
 
     @Override
     public long price(PersonRow row) {
+      if (!row.hindered) {
+        return 0;
+      }
       long found = 0;
       for (int i = 0; i < row.count; i++) {
         if (Absent.merelyLikely(row, i) && Absent.away(row, i)) {

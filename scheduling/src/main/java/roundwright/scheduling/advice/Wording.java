@@ -174,16 +174,20 @@ final class Wording {
 
   /** A number with its noun, such as {@code 1 minute} or {@code 3 minutes}. */
   static String count(long number, String noun) {
-    return number + " " + (number == 1 ? noun : noun.equals("person") ? "people" : noun + "s");
+    if (number != 1 && noun.endsWith("person")) {
+      return number + " " + noun.substring(0, noun.length() - 6) + "people";
+    }
+    return number + " " + (number == 1 ? noun : noun + "s");
   }
 
   static String oneDecimal(BigDecimal number) {
     return number.setScale(1, RoundingMode.HALF_UP).toPlainString();
   }
 
-  /** Begins with a capital where a word of ours stands first. */
+  /** Begins with a capital where a word of ours stands first; a name keeps its own spelling. */
   static String capital(String says) {
-    return says.startsWith("group ") ? "G" + says.substring(1) : says;
+    boolean ours = says.startsWith("group ") || says.startsWith("the ");
+    return ours ? Character.toUpperCase(says.charAt(0)) + says.substring(1) : says;
   }
 
   static String oneLine(String text) {

@@ -19,6 +19,14 @@ import roundwright.scheduling.model.Rules;
  * contiguous from {@code placeStart[g * 3 + k]} to {@code placeStart[g * 3 + k + 1]}.
  */
 public final class Frame {
+  /** The order of a frame's groups. */
+  public static final Comparator<Slot> IN_TIME =
+      Comparator.comparingInt(Slot::start)
+          .thenComparingInt(Slot::end)
+          .thenComparingInt(Slot::hall)
+          .thenComparingInt(Slot::number)
+          .thenComparingInt(Slot::round);
+
   public final Problem problem;
   public final int groups;
   public final int words;
@@ -84,14 +92,18 @@ public final class Frame {
   public final boolean[][] mealLeft;
 
   public Frame(Problem problem, List<Slot> slots) {
+    this(problem, slots, new int[slots.size() * 3]);
+  }
+
+  /**
+   * With room for a larger crew than is wanted, as a plan by hand may have.
+   *
+   * @param leastPlaces of each group in the order of {@link #IN_TIME}, and role
+   */
+  public Frame(Problem problem, List<Slot> slots, int[] leastPlaces) {
     this.problem = problem;
     List<Slot> inTime = new ArrayList<>(slots);
-    inTime.sort(
-        Comparator.comparingInt(Slot::start)
-            .thenComparingInt(Slot::end)
-            .thenComparingInt(Slot::hall)
-            .thenComparingInt(Slot::number)
-            .thenComparingInt(Slot::round));
+    inTime.sort(IN_TIME);
     groups = inTime.size();
     words = Math.max(1, (groups + 63) >>> 6);
     round = inTime.stream().mapToInt(Slot::round).toArray();
@@ -131,7 +143,8 @@ public final class Frame {
     for (int gk = 0; gk < groups * 3; gk++) {
       int g = gk / 3;
       int most = problem.wanted(round[g], gk % 3, stations[g], Integer.MAX_VALUE);
-      placeStart[gk + 1] = placeStart[gk] + Math.max(most, pinnedDuties[gk]);
+      placeStart[gk + 1] =
+          placeStart[gk] + Math.max(Math.max(most, leastPlaces[gk]), pinnedDuties[gk]);
     }
     places = placeStart[groups * 3];
     placeGroup = new int[places];

@@ -95,30 +95,44 @@ public final class RuleBook {
   /** The price by rule: breaches and gaps as they are, strain in weighted millionths. */
   public Map<RuleName, Long> explain(Board board) {
     Map<RuleName, Long> found = new EnumMap<>(RuleName.class);
-    PersonRow person = new PersonRow();
     for (int p = 0; p < board.problem.people; p++) {
-      person.load(board, p);
-      for (PersonRule rule : personBreaches) {
-        found.merge(rule.name(), rule.price(person), Long::sum);
-      }
-      for (PersonRule rule : personStrains) {
-        found.merge(rule.name(), rule.price(person), Long::sum);
-      }
+      explainPerson(board, p).forEach((rule, price) -> found.merge(rule, price, Long::sum));
     }
-    GroupRow group = new GroupRow();
     for (int g = 0; g < board.frame.groups; g++) {
-      group.load(board, g);
-      for (GroupRule rule : groupBreaches) {
-        found.merge(rule.name(), rule.price(group), Long::sum);
-      }
-      found.merge(groupGaps.name(), groupGaps.price(group), Long::sum);
-      for (GroupRule rule : groupStrains) {
-        found.merge(rule.name(), rule.price(group), Long::sum);
-      }
+      explainGroup(board, g).forEach((rule, price) -> found.merge(rule, price, Long::sum));
     }
     frameBreaches.forEach(rule -> found.merge(rule.name(), rule.price(board.frame), Long::sum));
     frameStrains.forEach(rule -> found.merge(rule.name(), rule.price(board.frame), Long::sum));
     found.values().removeIf(amount -> amount == 0);
+    return found;
+  }
+
+  /** The price by rule of one person's own row. */
+  public Map<RuleName, Long> explainPerson(Board board, int person) {
+    Map<RuleName, Long> found = new EnumMap<>(RuleName.class);
+    PersonRow row = new PersonRow();
+    row.load(board, person);
+    for (PersonRule rule : personBreaches) {
+      found.merge(rule.name(), rule.price(row), Long::sum);
+    }
+    for (PersonRule rule : personStrains) {
+      found.merge(rule.name(), rule.price(row), Long::sum);
+    }
+    return found;
+  }
+
+  /** The price by rule of one group's own row. */
+  public Map<RuleName, Long> explainGroup(Board board, int group) {
+    Map<RuleName, Long> found = new EnumMap<>(RuleName.class);
+    GroupRow row = new GroupRow();
+    row.load(board, group);
+    for (GroupRule rule : groupBreaches) {
+      found.merge(rule.name(), rule.price(row), Long::sum);
+    }
+    found.merge(groupGaps.name(), groupGaps.price(row), Long::sum);
+    for (GroupRule rule : groupStrains) {
+      found.merge(rule.name(), rule.price(row), Long::sum);
+    }
     return found;
   }
 }

@@ -21,7 +21,8 @@ final class Covering {
   private static final int NONE = -1;
   private static final int SAMPLED = 6;
   private static final int LEAST_TENURE = 8;
-  private static final int PATIENCE_BEFORE_EXCHANGE = 3_000;
+  private static final int LEAST_PATIENCE = 50;
+  private static final int PATIENCE_EACH = 20;
   private static final int MOVES_PER_MOMENT = 200;
   private static final int MOST_AT_ONCE = 200;
   private static final int OPEN_COST = 1000;
@@ -235,6 +236,10 @@ final class Covering {
   private boolean cover(long steps) {
     int fewestOpen = openCount;
     long since = step;
+    long patience = LEAST_PATIENCE;
+    for (boolean one : active) {
+      patience += one ? PATIENCE_EACH : 0;
+    }
     while (openCount > 0) {
       if (step >= steps) {
         return false;
@@ -250,7 +255,7 @@ final class Covering {
       if (openCount < fewestOpen) {
         fewestOpen = openCount;
         since = step;
-      } else if (step - since > PATIENCE_BEFORE_EXCHANGE) {
+      } else if (step - since > patience) {
         exchange();
         fewestOpen = openCount;
         since = step;
@@ -462,10 +467,18 @@ final class Covering {
     barredUntil[person * tasks.candidates.length + tasks.kind[task]] = step + tenure;
   }
 
-  /** Somebody who serves steps back for somebody who does not. */
+  /**
+   * Of a few who serve, the one with the fewest duties steps back for somebody an open one asks.
+   */
   private void exchange() {
-    int in = any(p -> !active[p]);
-    int out = any(p -> active[p] && !tasks.mustServe[p]);
+    int[] able = tasks.candidates[tasks.kind[open[dice.below(openCount)]]];
+    int[] idle = IntStream.of(able).filter(p -> !active[p]).toArray();
+    int in = idle.length == 0 ? any(p -> !active[p]) : idle[dice.below(idle.length)];
+    int out = NONE;
+    for (int i = 0; i < SAMPLED / 2; i++) {
+      int one = any(p -> active[p] && !tasks.mustServe[p]);
+      out = out == NONE || (one != NONE && load[one] < load[out]) ? one : out;
+    }
     if (in != NONE && out != NONE) {
       empty(out);
       active[in] = true;

@@ -3,7 +3,6 @@ package roundwright.server.command;
 import java.io.PrintWriter;
 import java.math.BigDecimal;
 import java.nio.file.Path;
-import java.time.Instant;
 import java.util.List;
 import java.util.Locale;
 import java.util.Map;
@@ -22,8 +21,6 @@ import roundwright.scheduling.audit.Verdict;
 import roundwright.scheduling.cost.Finding;
 import roundwright.scheduling.cost.Level;
 import roundwright.scheduling.cost.RuleName;
-import roundwright.scheduling.file.EventFile;
-import roundwright.scheduling.file.FileProblems;
 import roundwright.scheduling.model.Event;
 import roundwright.scheduling.model.Plan;
 
@@ -83,7 +80,7 @@ final class CheckCommand implements Callable<Integer> {
           auditor.audit(
               plan,
               at.isPresent()
-                  ? new Kept(kept, Optional.of(moment(at.get(), event)))
+                  ? new Kept(kept, Optional.of(Named.moment("--at", at.get(), event)))
                   : new Kept(kept));
     } else {
       verdict = auditor.audit(plan);
@@ -96,14 +93,6 @@ final class CheckCommand implements Callable<Integer> {
     }
     out.flush();
     return verdict.cost().breaches() == 0 ? 0 : 1;
-  }
-
-  private static Instant moment(String text, Event event) throws Refusal {
-    try {
-      return EventFile.moment("--at", text, event);
-    } catch (FileProblems problems) {
-      throw new Refusal(problems.getMessage());
-    }
   }
 
   /** The figures as the file format's page lays them down. */

@@ -21,6 +21,7 @@ import picocli.CommandLine.Spec;
       CheckCommand.class,
       ForecastCommand.class,
       AdviseCommand.class,
+      WhyCommand.class,
       ImportCommand.class,
       ServeCommand.class,
       DemoCommand.class

@@ -131,6 +131,93 @@ final class CommandLineTest {
   }
 
   @Test
+  void why_tells_what_a_duty_costs_and_what_else_there_is() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = file("plan.json", PLAN);
+    Outcome asked = run("why", event, plan, "--person", "Cy");
+    assertEquals(0, asked.code(), asked.err());
+    // one duty of 15 minutes: load 1 x 0.5, waiting 1/4 hour x 4
+    assertEquals(
+        List.of(
+            "Cy has 1 commitment, which cost load 0.5, waiting 1.0.",
+            "  Cy is judge of group 1 of 3x3x3 round 1 (Sat 8 May 09:00-09:15), which costs load"
+                + " 0.5, waiting 1.0; the best alternative is to take Cy off duty as judge of group"
+                + " 1 of 3x3x3 round 1 (Sat 8 May 09:00-09:15): 1 gap more, strain 1.5 less."),
+        asked.out().lines().toList());
+    assertRefused(
+        "--person is \"Cyd\"; give the id or name of somebody in the event",
+        run("why", event, plan, "--person", "Cyd"));
+    assertRefused("Ask about --person, or about --group and --duty", run("why", event, plan));
+    assertRefused(
+        "--group is \"b/1\"; give the id of a group of the plan, or its round and number such as"
+            + " a/1",
+        run("why", event, plan, "--group", "b/1", "--duty", "judge"));
+    assertRefused(
+        "--duty is \"timer\"; give one of judge, scrambler, runner",
+        run("why", event, plan, "--group", "a/1", "--duty", "timer"));
+  }
+
+  @Test
+  void an_empty_duty_is_explained_and_advice_says_what_would_fill_it() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = file("plan.json", PLAN.replace("[\"p3\"]", "[]"));
+    Outcome asked = run("why", event, plan, "--group", "a/1", "--duty", "judge");
+    assertEquals(0, asked.code(), asked.err());
+    assertTrue(
+        asked.out().startsWith("Group 1 of 3x3x3 round 1 (Sat 8 May 09:00-09:15) could have its"),
+        asked.out());
+    assertTrue(asked.out().contains("of 4 people, 3 lack the skill, 1 could do it."), asked.out());
+    String put =
+        "  Put Cy on duty as judge of group 1 of 3x3x3 round 1 (Sat 8 May 09:00-09:15): 1 gap fewer,"
+            + " strain 1.5 more.";
+    assertTrue(asked.out().contains(put), asked.out());
+    Outcome advised = run("advise", event, plan);
+    assertEquals(1, advised.code(), advised.err());
+    assertTrue(advised.out().contains(put), advised.out());
+    assertTrue(
+        advised.out().contains("2 people could cover all 2 duties, and no fewer could."),
+        advised.out());
+  }
+
+  @Test
+  void advice_on_one_question_names_stand_ins_and_what_breaks() throws IOException {
+    String more = EVENT.replace("\"Cy\", \"crew\"", "\"Cy\", \"household\": null, \"crew\"");
+    Path event =
+        file(
+            "event.json",
+            more.replace(
+                "{\"id\": \"p4\"",
+                "{\"id\": \"p5\", \"name\": \"Ed\", \"crew\": {\"judges\": true}}, {\"id\": \"p4\""));
+    Path plan = file("plan.json", PLAN);
+    Outcome standIn =
+        run("advise", event, plan, "--group", "a/1", "--duty", "judge", "--falls-out", "Cy");
+    assertEquals(0, standIn.code(), standIn.err());
+    assertEquals("Ed can stand in: the price stays the same; tell Ed.", standIn.out().strip());
+    Outcome leaves = run("advise", event, plan, "--falls-out", "Cy");
+    assertEquals(
+        List.of(
+            "Take Cy out of the event: 1 gap more, strain 1.5 less (unfilled +1, load -0.5, waiting"
+                + " -1.0).",
+            "  new:  Group 1 of 3x3x3 round 1 (Sat 8 May 09:00-09:15) has 0 of the 1 judge it"
+                + " wants."),
+        leaves.out().lines().toList());
+    Outcome moved = run("advise", event, plan, "--group", "a/1", "--start", "2027-05-08T08:50");
+    assertTrue(
+        moved
+            .out()
+            .startsWith(
+                "Move group 1 of 3x3x3 round 1 (Sat 8 May 09:00-09:15) to Sat 8 May 08:50: 2 breaches"
+                    + " more (hall-closed +2)."),
+        moved.out());
+    assertRefused(
+        "Name the plan that the question is about after the event",
+        run("advise", event, "--falls-out", "Cy"));
+    assertRefused(
+        "--hall is \"attic\"; give the id of a hall: h",
+        run("advise", event, plan, "--group", "a/1", "--hall", "attic"));
+  }
+
+  @Test
   void a_file_with_three_mistakes_gives_three_lines_and_plans_nothing() throws IOException {
     Path event =
         file(
@@ -265,7 +352,7 @@ final class CommandLineTest {
   }
 
   @ParameterizedTest
-  @ValueSource(strings = {"", "plan", "check", "forecast", "advise", "serve"})
+  @ValueSource(strings = {"", "plan", "check", "forecast", "advise", "why", "serve"})
   void each_command_helps_and_ends_well(String command) {
     Outcome help = command.isEmpty() ? run("--help") : run(command, "--help");
     assertEquals(0, help.code());

@@ -324,6 +324,11 @@ public final class Scene {
     return verdict(Optional.empty());
   }
 
+  /** How many people there are so far. */
+  public int people() {
+    return list(event, "people").size();
+  }
+
   /** Ids of those with an entry in a discipline, in the order of the file. */
   @SuppressWarnings("unchecked")
   public List<String> entered(String discipline) {

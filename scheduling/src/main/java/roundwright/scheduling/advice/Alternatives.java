@@ -82,6 +82,7 @@ final class Alternatives {
     int here = frame.placeGroup[place];
     if (other < 0
         || other == person
+        || here == there
         || frame.placePin[at] >= 0
         || !able(person, at)
         || !able(other, place)

@@ -21,8 +21,8 @@ import roundwright.scheduling.model.Role;
  */
 public record FewestPeople(
     List<String> people, int atLeast, int uncovered, Plan plan, String says) {
-  /** Moves that find the fewest for events of some hundred duties within seconds. */
-  public static final long ENOUGH_STEPS = 2_000_000;
+  /** Moves that take some seconds for an event of a thousand duties. */
+  public static final long ENOUGH_STEPS = 300_000;
 
   public FewestPeople {
     people = List.copyOf(people);
@@ -52,7 +52,7 @@ public record FewestPeople(
             + Wording.count(covering.duties(), "duty").replace("dutys", "duties")
             + (people.size() == atLeast
                 ? ", and no fewer could."
-                : "; fewer than " + atLeast + " could not.");
+                : "; at least " + atLeast + " are needed.");
     return new FewestPeople(new ArrayList<>(people), atLeast, covering.uncovered(), plan, says);
   }
 

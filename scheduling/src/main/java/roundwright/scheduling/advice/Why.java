@@ -121,6 +121,7 @@ public record Why(String person, List<Commitment> commitments, String says) {
       int kind = commitment & 3;
       Map<RuleName, Long> with = prices(g);
       Optional<Alternative> best = Optional.empty();
+      String none = "it is pinned";
       Map<RuleName, Long> without;
       if (kind == Problem.SOLVING) {
         int seat = standing.problem.seatOf(person, frame.round[g]);
@@ -131,6 +132,7 @@ public record Why(String person, List<Commitment> commitments, String says) {
         without = prices(g);
         standing.ledger.undo();
         best = held ? alternatives.toSeat(seat) : best;
+        none = frame.groupsOf[frame.round[g]].length == 1 ? "the round has no other group" : none;
       } else {
         int place = placeOf(g, kind);
         standing.ledger.duty(place, -1);
@@ -148,7 +150,7 @@ public record Why(String person, List<Commitment> commitments, String says) {
           role,
           Collections.unmodifiableSortedMap(byRule),
           best,
-          says(g, role, byRule, best));
+          says(g, role, byRule, best, none));
     }
 
     private int placeOf(int g, int role) {
@@ -203,7 +205,8 @@ public record Why(String person, List<Commitment> commitments, String says) {
         int g,
         Optional<Role> role,
         Map<RuleName, BigDecimal> byRule,
-        Optional<Alternative> alternative) {
+        Optional<Alternative> alternative,
+        String none) {
       String other =
           alternative
               .map(
@@ -216,7 +219,7 @@ public record Why(String person, List<Commitment> commitments, String says) {
                         + ": "
                         + price;
                   })
-              .orElse("it is pinned or there is nothing else to do");
+              .orElse(none);
       return words.name(id)
           + " "
           + role.map(duty -> "is " + duty.word() + " of").orElse("solves in")

@@ -20,6 +20,7 @@ final class ExactParts {
   private static final long FILLED = 1L << 40;
   private static final long EMPTY_BREACHES = 50;
   private static final long UNIT = 1_000_000L;
+  private static final int NO_SKILL = -1;
 
   private final Ledger ledger;
   private final Board board;
@@ -163,13 +164,27 @@ final class ExactParts {
     for (int i = 0; i < groups.length; i++) {
       int g = groups[i];
       boolean could = frame.isFree(person, g) && board.couldTake(person, g);
-      long change = could ? ledger.priceWith(person, g << 2) - now : 0;
+      int skill = could ? skillOf(person, frame.round[g]) : NO_SKILL;
+      could = skill != NO_SKILL;
+      long change = could ? ledger.priceWith(person, g << 2 | skill) - now : 0;
       for (int role = 0; role < 3; role++) {
         boolean able = could && problem.skilled(person, frame.round[g], role);
         long kin = role == 0 && able ? kinWeight * board.kinSolving(person, g) : 0;
         transport.cost(row, i * 3 + role, able ? change + kin : Transport.FORBIDDEN);
       }
     }
+  }
+
+  /**
+   * A role the person can have: in their own price all of these cost alike, and others a breach.
+   */
+  private int skillOf(int person, int round) {
+    for (int role = 0; role < 3; role++) {
+      if (problem.skilled(person, round, role)) {
+        return role;
+      }
+    }
+    return NO_SKILL;
   }
 
   private int emptyPlace(int group, int role) {

@@ -4,6 +4,8 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Map;
+import java.util.TreeMap;
 import java.util.stream.IntStream;
 import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.core.Problem;
@@ -52,6 +54,11 @@ final class PossibleTimes {
   private final int[] pinnedHall;
   private final Starts[] ofRound;
 
+  /** By round and minutes, once the order of the rounds is reckoned with. */
+  private final Map<Integer, Map<Integer, Starts>> known = new TreeMap<>();
+
+  private boolean ordered;
+
   PossibleTimes(Problem problem) {
     this.problem = problem;
     setup = problem.event.rules().setupMinutes();
@@ -81,6 +88,7 @@ final class PossibleTimes {
       }
     }
     order();
+    ordered = true;
     for (int r = 0; r < rounds; r++) {
       if (placed[r]) {
         ofRound[r] = starts(r, longestMinutes[r], true);
@@ -208,6 +216,15 @@ final class PossibleTimes {
 
   /** When a group of a round may start, with or without regard to the rounds before and after. */
   Starts starts(int r, int minutes, boolean inOrder) {
+    if (!ordered || !inOrder) {
+      return allStarts(r, minutes, inOrder);
+    }
+    return known
+        .computeIfAbsent(r, first -> new TreeMap<>())
+        .computeIfAbsent(minutes, first -> allStarts(r, minutes, true));
+  }
+
+  private Starts allStarts(int r, int minutes, boolean inOrder) {
     int earliest = Math.max(problem.notBefore[r], inOrder ? ready[r] : Problem.NEVER);
     int latest = Math.min(problem.notAfter[r], inOrder ? deadline[r] : Problem.FOREVER);
     List<Starts.Stretch> found = new ArrayList<>();
@@ -245,7 +262,9 @@ final class PossibleTimes {
   /** Those starts at which somebody is not busy, and there where that is asked for. */
   Starts withPerson(Starts starts, int person, int minutes, boolean there) {
     Starts found = starts;
-    if (there) {
+    boolean always =
+        problem.presentFrom[person].length == 1 && problem.presentFrom[person][0] == Problem.NEVER;
+    if (there && !always) {
       List<Starts.Stretch> present = new ArrayList<>();
       for (int w = 0; w < problem.presentFrom[person].length; w++) {
         present.add(

@@ -92,8 +92,19 @@ final class Remedies {
     return new Change.PutOnDuty(standing.personId(person), groupId, duty);
   }
 
+  /** Those who could simply take the duty, for least strain. */
+  void whoIsFree() {
+    List<Guess> free = new ArrayList<>();
+    for (int p : frame.candidates[group * 3 + role]) {
+      if (Obstacle.of(standing, p, group, role) == Obstacle.NONE) {
+        free.add(new Guess(put(p), strainWith(p)));
+      }
+    }
+    addBest(free);
+  }
+
   /** All kinds but those that only move duties of the time. */
-  void others() {
+  void beyondDuties() {
     addBest(competitorsElsewhere());
     List<Guess> taught = new ArrayList<>();
     List<Guess> asked = new ArrayList<>();
@@ -129,7 +140,8 @@ final class Remedies {
 
   private long strainWith(int p) {
     long change = ledger.priceWith(p, group << 2 | role) - ledger.priceNow(p);
-    return Math.floorMod(change, Ledger.BREACH_IN_TRIALS);
+    long breaches = Math.floorDiv(change + Ledger.BREACH_IN_TRIALS / 2, Ledger.BREACH_IN_TRIALS);
+    return change - breaches * Ledger.BREACH_IN_TRIALS;
   }
 
   private void asked(int p, List<Guess> guesses) {

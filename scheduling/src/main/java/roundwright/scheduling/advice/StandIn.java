@@ -132,13 +132,27 @@ public record StandIn(
         if (g != group && apart) {
           continue;
         }
-        int at = (commitment & 3) == Problem.SOLVING ? -1 : board.placeOf(p, g);
+        int at = dutyPlace(p, commitment, places);
         if (g == group || at < 0 || frame.start[g] < now || frame.placePin[at] == p) {
           return Optional.empty();
         }
         places.add(at);
       }
       return Optional.of(places);
+    }
+
+    /** The place of a duty, but for those already known; -1 where it is solving. */
+    private int dutyPlace(int p, int commitment, List<Integer> but) {
+      if ((commitment & 3) == Problem.SOLVING) {
+        return -1;
+      }
+      int gk = (commitment >> 2) * 3 + (commitment & 3);
+      for (int at = frame.placeStart[gk]; at < frame.placeStart[gk + 1]; at++) {
+        if (board.placePerson[at] == p && !but.contains(at)) {
+          return at;
+        }
+      }
+      return -1;
     }
 
     private Optional<StandIn> consider(int p) {

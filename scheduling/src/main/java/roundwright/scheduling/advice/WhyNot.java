@@ -124,10 +124,11 @@ public record WhyNot(
         if (search.isEmpty() && short_ != null) {
           shortage = Optional.of(shortage(short_, failed.get()));
           says = says(short_, failed.get(), shortage.get());
+          search.beyondDuties();
         } else {
+          search.whoIsFree();
           says = words.group(standing.groups.get(group)) + " could have its " + word();
         }
-        search.others();
         remedies = search.best();
       }
       return new WhyNot(

@@ -317,6 +317,9 @@ public final class Frame {
   private int seededPlace(int seat) {
     int r = problem.seatRound[seat];
     int several = groupsOf[r].length;
+    if (several == 0) {
+      return 0;
+    }
     return problem.roundList.get(r).seeding() == Round.Seeding.MIXED
         ? problem.seatRank[seat] % several
         : (int) ((long) problem.seatRank[seat] * several / problem.entrants(r));

@@ -104,7 +104,7 @@ public final class Standing {
     return known(groupIndex.get(id), "group", id);
   }
 
-  /** Room for every listing, and for every pin beside it. */
+  /** Room for every listing and every wanted duty, and for every pin beside them. */
   private int[] listed() {
     int[] places = new int[groups.size() * 3];
     for (int g = 0; g < groups.size(); g++) {
@@ -115,7 +115,14 @@ public final class Standing {
                 .filter(pin -> pin.round().equals(group.round()) && pin.role() == role)
                 .filter(pin -> pin.number() == group.number())
                 .count();
-        places[g * 3 + Problem.role(role)] = group.crew().in(role).size() + (int) pins;
+        int wanted =
+            problem.wanted(
+                problem.round(group.round()),
+                Problem.role(role),
+                group.stations(),
+                Integer.MAX_VALUE);
+        places[g * 3 + Problem.role(role)] =
+            Math.max(wanted, group.crew().in(role).size()) + (int) pins;
       }
     }
     return places;

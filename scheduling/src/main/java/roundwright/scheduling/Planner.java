@@ -6,17 +6,15 @@ import java.util.Collections;
 import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import java.util.concurrent.ExecutionException;
 import java.util.concurrent.ExecutorService;
 import java.util.concurrent.Executors;
 import java.util.concurrent.Future;
 import roundwright.scheduling.audit.Auditor;
 import roundwright.scheduling.audit.Verdict;
-import roundwright.scheduling.core.Board;
 import roundwright.scheduling.core.Dice;
-import roundwright.scheduling.core.Frame;
 import roundwright.scheduling.core.Problem;
-import roundwright.scheduling.core.Slot;
 import roundwright.scheduling.cost.Cost;
 import roundwright.scheduling.cost.Level;
 import roundwright.scheduling.cost.RuleName;
@@ -25,30 +23,19 @@ import roundwright.scheduling.crewing.Crewing;
 import roundwright.scheduling.model.Event;
 import roundwright.scheduling.model.Plan;
 import roundwright.scheduling.rules.RuleBook;
-import roundwright.scheduling.timetable.Timetabling;
 
 /**
- * From an event to a plan: a few day plans, each tried with a first arrangement of groups and
- * crews, the best of them annealed for the rest of the budget. Every plan that leaves has been
- * priced by the auditor. One call at a time for each instance.
+ * From an event to a plan: a day plan chosen by the first arrangements over it, that arrangement
+ * annealed for the rest of the budget. Several threads make independent searches, the best of which
+ * is kept. Every plan that leaves has been priced by the auditor. One call at a time for each
+ * instance.
  */
 public final class Planner {
-  private static final int MOST_DAY_PLANS = 48;
-  private static final int ENOUGH_DAY_PLANS = 6;
-  private static final double FEWEST_LAYOUTS = 50;
-  private static final double MOST_LAYOUTS = 1_000_000;
-  private static final double FIRST_DAY_PLAN_PART = 0.12;
-  private static final double DAY_PLAN_PART = 0.03;
-  private static final double DAY_PLAN_POLISH_PART = 0.04;
-  private static final double DAY_PLANS_UNTIL = 0.3;
-  private static final double DAY_PLANS_UNTIL_IF_BROKEN = 0.8;
+  private static final long SEED_STRIDE = 1_000_003;
+  private static final double DAY_PLAN_PART = 0.5;
+  private static final double DAY_PLAN_PART_IF_BROKEN = 0.8;
+  private static final double MORE_MOVES_IF_BROKEN = 8;
   private static final double POLISH_AT = 0.97;
-  private static final double MOVES_PER_LAYOUT = 8.0;
-  private static final double WARMER = 1.6;
-  private static final double FIRST_PRESSURE = 0.1;
-  private static final double MORE_PRESSURE = 0.08;
-  private static final double LESS_PRESSURE = 0.05;
-  private static final double MOST_PRESSURE = 0.6;
   private static final double LIKELY_MOVES_A_SECOND = 400_000;
 
   private final Event event;
@@ -74,125 +61,23 @@ public final class Planner {
   }
 
   private Plan plan() {
-    Arrangement best = anneal(bestDayPlan());
+    Arrangement best = effort.threads() == 1 ? search(0) : Collections.min(searchSeveral());
     spending.report(Progress.Stage.DONE, best.hard, best.strain, List.of());
     return signed(Written.plan(best));
   }
 
   private Plan signed(Plan plan) {
     Verdict verdict = new Auditor(event).audit(plan);
-    return new Plan(plan.groups(), java.util.Optional.of(verdict.cost()), verdict.findings());
+    return new Plan(plan.groups(), Optional.of(verdict.cost()), verdict.findings());
   }
 
-  private Arrangement bestDayPlan() {
-    Timetabling timetabling = new Timetabling(problem);
-    Arrangement best = null;
-    double pressure = FIRST_PRESSURE;
-    double warmth = 1;
-    for (int attempt = 0; attempt < MOST_DAY_PLANS; attempt++) {
-      if (best != null && enoughDayPlans(best, attempt)) {
-        break;
-      }
-      Dice dice = new Dice(effort.seed() * 1_000_003 + attempt);
-      Frame frame = layOut(timetabling, pressure, attempt, dice, warmth, best);
-      Crewing crewing = new Crewing(frame, book, dice);
-      boolean whole = crewing.firstPlan(best == null ? spending::overdue : spending::over);
-      if (!whole && best != null) {
-        break;
-      }
-      if (attempt > 0) {
-        double before = spending.usedTime();
-        crewing.polish(
-            () -> spending.over() || spending.usedTime() - before > DAY_PLAN_POLISH_PART);
-      }
-      Arrangement found = crewing.arrangement();
-      if (found.hard > 0) {
-        boolean gaps = Lessons.learn(found.board(), timetabling);
-        pressure = gaps ? Math.min(MOST_PRESSURE, pressure + MORE_PRESSURE) : pressure;
-      } else {
-        pressure = Math.max(0, pressure - LESS_PRESSURE);
-      }
-      if (book.hard(frame) > 0) {
-        timetabling.forget();
-      }
-      boolean better = best == null || found.compareTo(best) < 0;
-      warmth = better ? 1 : warmth * WARMER;
-      best = better ? found : best;
-      spending.report(Progress.Stage.FIRST_PLAN, best.hard, best.strain, stillWrong(best));
-    }
-    return best;
-  }
-
-  private boolean enoughDayPlans(Arrangement best, int attempts) {
-    boolean enough = best.hard == 0 && attempts >= ENOUGH_DAY_PLANS;
-    return enough
-        || spending.over()
-        || spending.usedTime() > (best.hard == 0 ? DAY_PLANS_UNTIL : DAY_PLANS_UNTIL_IF_BROKEN);
-  }
-
-  /**
-   * The first day plan is laid out in no time, so that there is something to stop with; the second
-   * takes its time, and those after it go on from there unless it was no good by itself.
-   */
-  private Frame layOut(
-      Timetabling timetabling,
-      double pressure,
-      int attempt,
-      Dice dice,
-      double warmth,
-      Arrangement best) {
-    double part = attempt == 0 ? 0 : timetabling.begun() ? DAY_PLAN_PART : FIRST_DAY_PLAN_PART;
-    double usedBefore = spending.usedTime();
-    double steps = effort.steps().orElse(Long.MAX_VALUE);
-    double most = Math.max(FEWEST_LAYOUTS, Math.min(MOST_LAYOUTS, steps / MOVES_PER_LAYOUT) * part);
-    List<String> wrong = best == null ? List.of() : stillWrong(best);
-    List<Slot> slots =
-        timetabling.search(
-            pressure,
-            dice,
-            warmth,
-            layouts -> {
-              if (best != null) {
-                spending.reportNowAndThen(
-                    Progress.Stage.TIMETABLE, 0, best.hard, best.strain, wrong);
-              }
-              double byTime = part == 0 ? 0 : (spending.usedTime() - usedBefore) / part;
-              return spending.over() ? 1 : Math.max(layouts / most, byTime);
-            });
-    if (attempt == 0) {
-      timetabling.forget();
-    }
-    return new Frame(problem, slots);
-  }
-
-  private List<String> stillWrong(Arrangement arrangement) {
-    if (arrangement.hard == 0) {
-      return List.of();
-    }
-    Board board = arrangement.board();
-    Map<RuleName, Long> wrong = new EnumMap<>(RuleName.class);
-    wrong.putAll(book.explain(board));
-    wrong.keySet().removeIf(rule -> rule.level() == Level.STRAIN);
-    return wrong.keySet().stream().map(RuleName::word).toList();
-  }
-
-  private Arrangement anneal(Arrangement from) {
-    List<Arrangement> found = new ArrayList<>();
-    if (effort.threads() == 1) {
-      found.add(annealOne(from, 0));
-    } else {
-      found.addAll(annealSeveral(from));
-    }
-    return Collections.min(found);
-  }
-
-  private List<Arrangement> annealSeveral(Arrangement from) {
+  private List<Arrangement> searchSeveral() {
     ExecutorService pool = Executors.newFixedThreadPool(effort.threads());
     try {
       List<Future<Arrangement>> running = new ArrayList<>();
       for (int thread = 0; thread < effort.threads(); thread++) {
         int number = thread;
-        running.add(pool.submit(() -> annealOne(from, number)));
+        running.add(pool.submit(() -> search(number)));
       }
       List<Arrangement> found = new ArrayList<>();
       for (Future<Arrangement> one : running) {
@@ -201,7 +86,7 @@ public final class Planner {
       return found;
     } catch (InterruptedException interrupted) {
       Thread.currentThread().interrupt();
-      return List.of(from);
+      throw new IllegalStateException("The search was interrupted", interrupted);
     } catch (ExecutionException failed) {
       throw new IllegalStateException("A search ended badly", failed.getCause());
     } finally {
@@ -209,9 +94,69 @@ public final class Planner {
     }
   }
 
-  private Arrangement annealOne(Arrangement from, int thread) {
-    Crewing crewing =
-        Crewing.from(from, book, new Dice(effort.seed() * 1_000_003 + MOST_DAY_PLANS + thread));
+  private Arrangement search(int thread) {
+    Dice dice = new Dice(effort.seed() * SEED_STRIDE + thread);
+    Arrangement first =
+        new DayPlanSearch(problem, book, dice, new DayPlanBudget(thread == 0)).best();
+    return anneal(first, dice, thread == 0);
+  }
+
+  /** The day plan's part of the effort: by the clock, and by moves as many as the annealing's. */
+  private final class DayPlanBudget implements DayPlanSearch.Budget {
+    private final boolean reporting;
+    private Arrangement reported;
+    private List<String> wrong = List.of();
+
+    DayPlanBudget(boolean reporting) {
+      this.reporting = reporting;
+    }
+
+    @Override
+    public double used(double moves, boolean broken) {
+      double most = effort.steps().orElse(Long.MAX_VALUE) * (broken ? MORE_MOVES_IF_BROKEN : 1);
+      double bySteps = moves / most;
+      double part = broken ? DAY_PLAN_PART_IF_BROKEN : DAY_PLAN_PART;
+      return Math.max(bySteps, spending.usedTime() / part);
+    }
+
+    @Override
+    public boolean over() {
+      return spending.over();
+    }
+
+    @Override
+    public boolean overdue() {
+      return spending.overdue();
+    }
+
+    @Override
+    public void found(Arrangement best, Progress.Stage stage) {
+      if (!reporting) {
+        return;
+      }
+      if (reported == null || best.compareTo(reported) != 0) {
+        wrong = stillWrong(best);
+        reported = best;
+        spending.report(stage, best.hard, best.strain, wrong);
+      } else {
+        spending.reportNowAndThen(stage, 0, best.hard, best.strain, wrong);
+      }
+    }
+  }
+
+  private List<String> stillWrong(Arrangement arrangement) {
+    if (arrangement.hard == 0) {
+      return List.of();
+    }
+    Map<RuleName, Long> wrong = new EnumMap<>(RuleName.class);
+    wrong.putAll(book.explain(arrangement.board()));
+    wrong.keySet().removeIf(rule -> rule.level() == Level.STRAIN);
+    return wrong.keySet().stream().map(RuleName::word).toList();
+  }
+
+  private Arrangement anneal(Arrangement from, Dice dice, boolean reporting) {
+    Crewing crewing = Crewing.from(from, book, dice);
+    crewing.polish(spending::over);
     double usedBefore = spending.usedTime();
     long most = effort.steps().orElse(Long.MAX_VALUE);
     Crewing.Budget budget =
@@ -234,7 +179,7 @@ public final class Planner {
         crewing.anneal(
             budget,
             (hard, strain, moves) -> {
-              if (thread == 0) {
+              if (reporting) {
                 List<String> still = hard == 0 ? List.of() : wrong;
                 spending.reportNowAndThen(Progress.Stage.CREWING, moves, hard, strain, still);
               }

@@ -39,6 +39,7 @@ public final class Crewing {
   private final Dice dice;
   private final Refill refill;
   private final Untangling untangling;
+  private final Relief relief;
 
   public Crewing(Frame frame, RuleBook book, Dice dice) {
     this(new Board(frame), book, dice);
@@ -52,6 +53,7 @@ public final class Crewing {
     this.dice = dice;
     this.refill = new Refill(ledger, dice);
     this.untangling = new Untangling(ledger, refill, dice);
+    this.relief = new Relief(ledger, refill);
   }
 
   /** Goes on from an arrangement. */
@@ -108,6 +110,7 @@ public final class Crewing {
       }
       parts.crewMoment(moment);
     }
+    relief.everyGroup(halt);
     return true;
   }
 
@@ -137,6 +140,7 @@ public final class Crewing {
         }
       }
       better |= untangling.everybody(halt);
+      better |= relief.everyGroup(halt);
       if (!better) {
         return;
       }

@@ -10,7 +10,8 @@ import java.util.Arrays;
  * paths of at most k arcs each, found by label correction (Bellman 1958).
  *
  * <p>A solver is made for its largest size and used over and over; not thread-safe. Layout: costs
- * by row, {@code cost[row * columns + column]}.
+ * by row, {@code cost[row * columns + column]}; what a row outside adds by entering, by column,
+ * since the cheapest of them is looked for down a column again and again.
  */
 public final class Transport {
   /** A cost that no solution may contain. */
@@ -23,6 +24,7 @@ public final class Transport {
   private int columns;
   private long[] cost = new long[0];
   private long[] outCost = new long[0];
+  private long[] entryCost = new long[0];
   private long[][] unitCost = new long[0][];
   private int[] used = new int[0];
   private int[] column = new int[0];
@@ -97,9 +99,22 @@ public final class Transport {
       }
       Arrays.fill(best, c * columns, (c + 1) * columns, FORBIDDEN);
     }
+    layOutEntries();
     boolean cheaper = true;
     while (cheaper) {
       cheaper = augment();
+    }
+  }
+
+  private void layOutEntries() {
+    if (entryCost.length < rows * columns) {
+      entryCost = new long[rows * columns];
+    }
+    for (int row = 0; row < rows; row++) {
+      for (int c = 0; c < columns; c++) {
+        long there = cost[row * columns + c];
+        entryCost[c * rows + row] = there < FORBIDDEN ? there - outCost[row] : FORBIDDEN;
+      }
     }
   }
 
@@ -133,10 +148,9 @@ public final class Transport {
     if (cheapest[c] == UNKNOWN || (cheapest[c] != OUT && column[cheapest[c]] != OUT)) {
       cheapest[c] = OUT;
       cheapestCost[c] = FORBIDDEN;
-      for (int row = 0; row < rows; row++) {
-        long there = cost[row * columns + c];
-        if (column[row] == OUT && there < FORBIDDEN && there - outCost[row] < cheapestCost[c]) {
-          cheapestCost[c] = there - outCost[row];
+      for (int row = 0, at = c * rows; row < rows; row++, at++) {
+        if (entryCost[at] < cheapestCost[c]) {
+          cheapestCost[c] = entryCost[at];
           cheapest[c] = row;
         }
       }
@@ -175,7 +189,11 @@ public final class Transport {
       position = vacated;
       c = from;
     }
-    place(cheapest[c], c, position);
+    int entered = cheapest[c];
+    place(entered, c, position);
+    for (int other = 0; other < columns; other++) {
+      entryCost[other * rows + entered] = FORBIDDEN;
+    }
     for (c = last; c != OUT; c = via[c]) {
       refresh(c);
     }

@@ -88,6 +88,20 @@ final class Decoder {
         .toArray();
   }
 
+  /** The same for layouts that are the same, and hardly ever for others. */
+  long fingerprint() {
+    long print = 1;
+    for (int r = 0; r < problem.rounds; r++) {
+      Shape own = shape[r];
+      for (int i = 0; own != null && i < own.groups; i++) {
+        print = (print ^ start[r][i]) * 0x100000001B3L;
+        print =
+            (print ^ (own.hall[i] << 20 | own.stations[i] << 10 | own.minutes[i])) * 0x100000001B3L;
+      }
+    }
+    return print;
+  }
+
   int days() {
     return dayStart.length;
   }

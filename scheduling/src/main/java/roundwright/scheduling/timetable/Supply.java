@@ -123,6 +123,10 @@ final class Supply {
     return kept;
   }
 
+  int lastMinute() {
+    return firstMinute + stretches * STRETCH_MINUTES;
+  }
+
   int stretch(int minute) {
     return Math.max(0, Math.min(stretches - 1, (minute - firstMinute) / STRETCH_MINUTES));
   }

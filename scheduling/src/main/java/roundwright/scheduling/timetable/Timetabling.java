@@ -16,10 +16,10 @@ import roundwright.scheduling.core.Slot;
  * may begin on. Not thread-safe.
  */
 public final class Timetabling {
-  private static final double WARM = 300;
-  private static final double LUKEWARM = 60;
   private static final double COOL = 2;
   private static final int LOOKS_BETWEEN = 16;
+  private static final int TRIES_PER_CHANGE = 50;
+  private static final int DRAWS = 1 << 20;
 
   private final Decoder decoder;
   private final Outlook outlook;
@@ -34,8 +34,6 @@ public final class Timetabling {
   private Dice dice;
   private double pressure;
   private int[] order;
-  private boolean begun;
-  private double foundPrice;
 
   public Timetabling(Problem problem) {
     halls = problem.halls;
@@ -66,25 +64,38 @@ public final class Timetabling {
     double used(long layouts);
   }
 
+  /** Stands where nothing is known yet: each round in the shape that fills the halls evenly. */
+  public void startAnew() {
+    order = firstOrder.clone();
+    Arrays.fill(earliest, Problem.NEVER);
+    int[] load = new int[halls];
+    IntStream.of(rounds)
+        .boxed()
+        .sorted(Comparator.comparingInt((Integer r) -> -minutes(shapes.get(r).get(0))))
+        .forEach(
+            r -> {
+              shape[r] =
+                  Collections.min(
+                      shapes.get(r), Comparator.comparingInt(one -> fullestHall(one, load)));
+              add(shape[r], load, 1);
+            });
+  }
+
   /**
-   * The best layout found within the budget, as slots; empty where no round has entrants. The first
-   * search begins anew and warm, later ones go on from the best one, cooler.
+   * The best layout by its outlook that is found within the budget, as slots; empty where no round
+   * has entrants. Goes on from where it stands, and stands at what it found.
    *
    * @param partKeptBack part of the people there that no crew may count on, 0 to 1: more of it
    *     spreads the groups further apart
-   * @param warmth how much warmer than lukewarm a search begins that goes on from another; 1 and up
+   * @param warm the temperature to begin at, in strain units
    */
-  public List<Slot> search(double partKeptBack, Dice chance, double warmth, Budget budget) {
+  public List<Slot> search(double partKeptBack, double warm, Dice chance, Budget budget) {
     pressure = partKeptBack;
     dice = chance;
-    double warm = begun ? Math.min(WARM, LUKEWARM * warmth) : WARM;
-    if (!begun) {
-      startAnew();
-    }
-    begun = true;
+    outlook.sampleOthers();
     double price = lay();
     List<Slot> best = decoder.slots();
-    Choice bestChoice = choice();
+    Choice bestChoice = standing();
     double bestPrice = price;
     long tried = 0;
     double temperature = warm;
@@ -99,49 +110,86 @@ public final class Timetabling {
       tried++;
       Change change = change();
       double then = lay();
-      double drawn = (dice.below(1 << 20) + 0.5) / (1 << 20);
-      if (then - price <= -temperature * StrictMath.log(drawn)) {
+      if (then - price <= -temperature * StrictMath.log(drawn())) {
         price = then;
         if (then < bestPrice) {
           bestPrice = then;
           best = decoder.slots();
-          bestChoice = choice();
+          bestChoice = standing();
         }
       } else {
         change.undo();
       }
     }
-    take(bestChoice);
-    foundPrice = bestPrice;
+    goBackTo(bestChoice);
     return best;
   }
 
-  /** Forgets the layout and what was learned, so that the next search begins anew. */
-  public void forget() {
-    begun = false;
+  /** What the next search goes on from: the layout found last, unless another is put back. */
+  public Choice standing() {
+    return new Choice(order.clone(), shape.clone(), earliest.clone());
+  }
+
+  public void goBackTo(Choice choice) {
+    order = choice.order.clone();
+    System.arraycopy(choice.shape, 0, shape, 0, shape.length);
+    System.arraycopy(choice.earliest, 0, earliest, 0, earliest.length);
+  }
+
+  /** All that the decoder was told for a layout: to be gone back to, and nothing else. */
+  public static final class Choice {
+    private final int[] order;
+    private final Shape[] shape;
+    private final int[] earliest;
+
+    private Choice(int[] order, Shape[] shape, int[] earliest) {
+      this.order = order;
+      this.shape = shape;
+      this.earliest = earliest;
+    }
+  }
+
+  /**
+   * Goes some changes on from where it stands, up and down as the temperature allows, and stays
+   * there: for whoever judges layouts by more than their outlook.
+   *
+   * @param partKeptBack as for {@link #search}
+   * @param temperature in strain units
+   * @param changes how many to take
+   */
+  public List<Slot> wander(double partKeptBack, double temperature, int changes, Dice chance) {
+    pressure = partKeptBack;
+    dice = chance;
+    outlook.sampleOthers();
+    double price = lay();
+    long layout = decoder.fingerprint();
+    int taken = 0;
+    int most = rounds.length == 0 ? 0 : changes * TRIES_PER_CHANGE;
+    for (int tried = 0; tried < most && taken < changes; tried++) {
+      Change change = change();
+      double then = lay();
+      if (decoder.fingerprint() == layout) {
+        continue;
+      }
+      if (then - price <= -temperature * StrictMath.log(drawn())) {
+        price = then;
+        layout = decoder.fingerprint();
+        taken++;
+      } else {
+        change.undo();
+      }
+    }
+    lay();
+    return decoder.slots();
+  }
+
+  private double drawn() {
+    return (dice.below(DRAWS) + 0.5) / DRAWS;
+  }
+
+  /** Forgets what was learned from plans that broke. */
+  public void forgetLessons() {
     outlook.forgetLessons();
-  }
-
-  /** Whether the next search goes on from the best layout of the last one. */
-  public boolean begun() {
-    return begun;
-  }
-
-  /** Spreads the rounds over the halls, the longest first, each in the shape that adds least. */
-  private void startAnew() {
-    order = firstOrder.clone();
-    Arrays.fill(earliest, Problem.NEVER);
-    int[] load = new int[halls];
-    IntStream.of(rounds)
-        .boxed()
-        .sorted(Comparator.comparingInt((Integer r) -> -minutes(shapes.get(r).get(0))))
-        .forEach(
-            r -> {
-              shape[r] =
-                  Collections.min(
-                      shapes.get(r), Comparator.comparingInt(one -> fullestHall(one, load)));
-              add(shape[r], load, 1);
-            });
   }
 
   private int minutes(Shape one) {
@@ -174,30 +222,6 @@ public final class Timetabling {
     if (shape[round] != null && shapes.get(round).size() > 1) {
       outlook.raiseShape(shape[round]);
     }
-  }
-
-  private record Choice(List<Integer> order, List<Shape> shape, List<Integer> earliest) {}
-
-  private Choice choice() {
-    return new Choice(
-        IntStream.of(order).boxed().toList(),
-        Collections.unmodifiableList(Arrays.asList(shape.clone())),
-        IntStream.of(earliest).boxed().toList());
-  }
-
-  private void take(Choice choice) {
-    for (int i = 0; i < order.length; i++) {
-      order[i] = choice.order.get(i);
-    }
-    for (int r = 0; r < shape.length; r++) {
-      shape[r] = choice.shape.get(r);
-      earliest[r] = choice.earliest.get(r);
-    }
-  }
-
-  /** What the last layout found is likely to cost, in strain units; a breach counts 20,000. */
-  public double foundPrice() {
-    return foundPrice;
   }
 
   private double lay() {

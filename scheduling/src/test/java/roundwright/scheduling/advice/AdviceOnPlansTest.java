@@ -316,11 +316,11 @@ class AdviceOnPlansTest {
       Cost after = new Auditor(with).price(recruit.plan());
       assertEquals(answer.gaps() - recruit.fills(), after.gaps(), about);
       assertTrue(after.breaches() <= before.breaches(), about + ": " + after);
-      Standing anew = new Standing(with, draft.plan());
+      Standing anew = new Standing(with, recruit.plan());
       Crewing crewing = Crewing.from(Arrangement.of(anew.ledger), anew.book, new Dice(seed));
       crewing.polish(() -> false);
       assertTrue(
-          crewing.hard() % RuleBook.BREACH <= answer.gaps() - (recruit.fills() + 1) / 2,
+          crewing.hard() % RuleBook.BREACH <= answer.gaps() - recruit.fills(),
           about + ": crewed anew " + crewing.hard() % RuleBook.BREACH + " gaps are left");
     }
     if (answer.gaps() > 0 && answer.recruits().isEmpty()) {

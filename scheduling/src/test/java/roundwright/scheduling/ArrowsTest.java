@@ -36,6 +36,7 @@ final class ArrowsTest {
               Map.entry("rules", List.of("core", "cost")),
               Map.entry("timetable", List.of("core", "rules", "forecast")),
               Map.entry("crewing", List.of("rules", "flow")),
+              Map.entry("bounds", List.of("crewing", "flow")),
               Map.entry("advice", List.of("crewing", "flow", "audit"))));
 
   private static final JavaClasses CLASSES =

@@ -34,6 +34,7 @@ final class DayPlanSearch {
   private static final int MOST_CHANGES = 8;
   private static final double OUTLOOK_WARMTH = 1.5;
   private static final double PRICE_WARMTH = 3;
+  private static final double MOVES_PER_FRAME = 400;
   private static final double MOVES_PER_PLACE = 8;
   private static final double MOVES_PER_POLISHED_PLACE = 60;
   private static final double SEATS_PER_MOVE = 20;
@@ -193,7 +194,7 @@ final class DayPlanSearch {
     Frame frame = new Frame(problem, slots);
     Crewing crewing = new Crewing(frame, book, dice);
     boolean whole = crewing.firstPlan(best == null ? budget::overdue : budget::over);
-    moves += MOVES_PER_PLACE * frame.places;
+    moves += MOVES_PER_FRAME + MOVES_PER_PLACE * frame.places;
     if (!whole && best != null) {
       return false;
     }

@@ -1,6 +1,10 @@
 package roundwright.server.command;
 
+import com.fasterxml.jackson.databind.node.ArrayNode;
+import com.fasterxml.jackson.databind.node.JsonNodeFactory;
+import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.io.PrintWriter;
+import java.io.Writer;
 import java.nio.file.Path;
 import java.time.Instant;
 import java.util.List;
@@ -99,7 +103,12 @@ final class AdviseCommand implements Callable<Integer> {
       description = "What breaks if --group is in this hall.")
   private Optional<String> hall = Optional.empty();
 
+  @Option(names = "--json", description = "Print the answer as JSON and nothing else.")
+  private boolean json;
+
   @Spec private CommandSpec spec;
+
+  private final ObjectNode answer = JsonNodeFactory.instance.objectNode();
 
   @Override
   public Integer call() throws Refusal {
@@ -109,22 +118,28 @@ final class AdviseCommand implements Callable<Integer> {
     }
     Event event = Given.event(eventFile);
     PrintWriter out = spec.commandLine().getOut();
-    try {
-      if (planFile.isEmpty()) {
-        return impossible(event, out);
-      }
+    PrintWriter told = json ? new PrintWriter(Writer.nullWriter()) : out;
+    int code;
+    if (planFile.isEmpty()) {
+      code = impossible(event, told);
+    } else {
       Draft draft = new Draft(event, Given.plan(planFile.get(), event));
-      if (!asks && start.isEmpty() && hall.isEmpty()) {
-        return Math.max(impossible(event, out), plan(draft, out));
-      }
-      return question(draft, out);
-    } finally {
-      out.flush();
+      code =
+          asks || start.isPresent() || hall.isPresent()
+              ? question(draft, told)
+              : Math.max(impossible(event, told), plan(draft, told));
     }
+    if (json) {
+      out.println(answer);
+    }
+    out.flush();
+    return code;
   }
 
-  private static int impossible(Event event, PrintWriter out) {
+  private int impossible(Event event, PrintWriter out) {
     List<Impossible> impossible = Impossible.of(event);
+    ArrayNode list = answer.putArray("impossible");
+    impossible.forEach(one -> list.add(AnswerJson.of(one)));
     if (impossible.isEmpty()) {
       out.println("Nothing is known that would keep a plan from doing all that is asked.");
       return 0;
@@ -134,30 +149,44 @@ final class AdviseCommand implements Callable<Integer> {
     return 1;
   }
 
-  private static int plan(Draft draft, PrintWriter out) {
+  private int plan(Draft draft, PrintWriter out) {
     List<WhyNot.Duties> empty = WhyNot.empty(draft);
+    ArrayNode list = answer.putArray("empty");
     for (WhyNot.Duties duties : empty.subList(0, Math.min(MOST_EMPTY_DUTIES, empty.size()))) {
+      WhyNot whyNot = WhyNot.of(draft, duties.group(), duties.role());
+      list.add(AnswerJson.of(whyNot));
       out.println();
-      WhyCommand.tell(WhyNot.of(draft, duties.group(), duties.role()), out);
+      WhyCommand.tell(whyNot, out);
     }
     if (empty.size() > MOST_EMPTY_DUTIES) {
       out.println();
       out.println("and " + (empty.size() - MOST_EMPTY_DUTIES) + " groups and duties more.");
     }
     if (!empty.isEmpty()) {
-      List<Recruiting.Recruit> recruits = Recruiting.of(draft).recruits();
-      out.println();
-      out.println("To recruit:");
-      recruits.stream().limit(MOST_RECRUITS).forEach(one -> out.println("  " + one.says()));
-      if (recruits.isEmpty()) {
-        out.println("  nobody: the people there are could fill every duty.");
-      }
+      recruit(draft, out);
     }
+    FewestPeople fewest = FewestPeople.of(draft, SEED, FewestPeople.ENOUGH_STEPS);
+    answer.set("fewest", AnswerJson.of(fewest));
     out.println();
-    out.println(
-        "Everybody solving where they do, "
-            + FewestPeople.of(draft, SEED, FewestPeople.ENOUGH_STEPS).says());
+    out.println("Everybody solving where they do, " + fewest.says());
     return empty.isEmpty() ? 0 : 1;
+  }
+
+  private void recruit(Draft draft, PrintWriter out) {
+    Recruiting recruiting = Recruiting.of(draft);
+    ArrayNode list = answer.putArray("recruits");
+    recruiting.recruits().forEach(one -> list.add(AnswerJson.of(one)));
+    out.println();
+    out.println("To recruit:");
+    recruiting.recruits().stream()
+        .limit(MOST_RECRUITS)
+        .forEach(one -> out.println("  " + one.says()));
+    if (recruiting.recruits().isEmpty()) {
+      out.println(
+          recruiting.gaps() == 0
+              ? "  nobody: the people there are could fill every duty."
+              : "  one person more would not help.");
+    }
   }
 
   private int question(Draft draft, PrintWriter out) throws Refusal {
@@ -198,16 +227,19 @@ final class AdviseCommand implements Callable<Integer> {
     }
     Instant now = at.isPresent() ? Named.moment("--at", at.get(), draft.event()) : moved.start();
     List<StandIn> found = StandIn.rank(draft, moved.id(), role, gone, now);
+    ArrayNode list = answer.putArray("standIns");
+    found.forEach(one -> list.add(AnswerJson.of(one)));
     found.stream().limit(MOST_STAND_INS).forEach(one -> out.println(one.says()));
     if (found.isEmpty()) {
       out.println("Nobody with the skill is free then, or could leave what they have later.");
     }
   }
 
-  private static void tell(Draft draft, Change change, PrintWriter out) {
-    WhatBreaks answer = WhatBreaks.of(draft, change);
-    out.println(answer.says());
-    answer.comes().forEach(finding -> out.println("  new:  " + finding.says()));
-    answer.goes().forEach(finding -> out.println("  gone: " + finding.says()));
+  private void tell(Draft draft, Change change, PrintWriter out) {
+    WhatBreaks breaks = WhatBreaks.of(draft, change);
+    answer.set("breaks", AnswerJson.of(breaks));
+    out.println(breaks.says());
+    breaks.comes().forEach(finding -> out.println("  new:  " + finding.says()));
+    breaks.goes().forEach(finding -> out.println("  gone: " + finding.says()));
   }
 }

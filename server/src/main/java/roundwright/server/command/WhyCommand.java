@@ -53,6 +53,9 @@ final class WhyCommand implements Callable<Integer> {
   @Option(names = "--duty", paramLabel = "D", description = "judge, scrambler or runner.")
   private Optional<String> duty = Optional.empty();
 
+  @Option(names = "--json", description = "Print the answer as JSON and nothing else.")
+  private boolean json;
+
   @Spec private CommandSpec spec;
 
   @Override
@@ -71,11 +74,20 @@ final class WhyCommand implements Callable<Integer> {
     if (person.isPresent()) {
       String id = Named.person("--person", person.get(), event);
       Why why = Why.of(draft, id, groupId);
-      out.println(why.says());
-      why.commitments().forEach(commitment -> out.println("  " + commitment.says()));
+      if (json) {
+        out.println(AnswerJson.of(why));
+      } else {
+        out.println(why.says());
+        why.commitments().forEach(commitment -> out.println("  " + commitment.says()));
+      }
     } else {
       Role role = Named.role("--duty", duty.orElseThrow());
-      tell(WhyNot.of(draft, groupId.orElseThrow(), role), out);
+      WhyNot answer = WhyNot.of(draft, groupId.orElseThrow(), role);
+      if (json) {
+        out.println(AnswerJson.of(answer));
+      } else {
+        tell(answer, out);
+      }
     }
     out.flush();
     return 0;

@@ -5,6 +5,8 @@ import static org.junit.jupiter.api.Assertions.assertEquals;
 import static org.junit.jupiter.api.Assertions.assertFalse;
 import static org.junit.jupiter.api.Assertions.assertTrue;
 
+import com.fasterxml.jackson.databind.JsonNode;
+import com.fasterxml.jackson.databind.ObjectMapper;
 import java.io.IOException;
 import java.io.PrintWriter;
 import java.io.StringWriter;
@@ -177,6 +179,37 @@ final class CommandLineTest {
     assertTrue(
         advised.out().contains("2 people could cover all 2 duties, and no fewer could."),
         advised.out());
+  }
+
+  @Test
+  void answers_as_json_hold_the_same_facts_on_one_line() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path plan = file("plan.json", PLAN);
+    Path gap = file("gap.json", PLAN.replace("[\"p3\"]", "[]"));
+    String why = run("why", event, plan, "--person", "Cy", "--json").out();
+    assertTrue(
+        why.startsWith(
+            "{\"person\":\"p3\",\"commitments\":[{\"group\":\"g\",\"does\":\"judge\",\"byRule\":"
+                + "{\"load\":0.5,\"waiting\":1.0},\"alternative\":{\"breaches\":0,\"gaps\":1,"
+                + "\"strain\":-1.5},\"says\":"),
+        why);
+    JsonNode empty =
+        tree(run("why", event, gap, "--group", "a/1", "--duty", "judge", "--json").out());
+    assertEquals(1, empty.get("empty").asInt());
+    assertEquals(3, empty.get("people").get("lacks-the-skill").asInt());
+    assertEquals(-1, empty.get("remedies").get(0).get("gaps").asInt());
+    JsonNode advice = tree(run("advise", event, gap, "--json").out());
+    assertEquals(0, advice.get("impossible").size());
+    assertEquals(1, advice.get("empty").size());
+    assertEquals(2, advice.get("fewest").get("fewest").asInt());
+    Outcome moved =
+        run("advise", event, plan, "--group", "a/1", "--start", "2027-05-08T08:50", "--json");
+    assertEquals(2, tree(moved.out()).get("breaks").get("byRule").get("hall-closed").asInt());
+  }
+
+  private static JsonNode tree(String line) throws IOException {
+    assertEquals(1, line.lines().count(), line);
+    return new ObjectMapper().readTree(line);
   }
 
   @Test

@@ -18,6 +18,7 @@ import picocli.CommandLine.Spec;
 import roundwright.scheduling.audit.Auditor;
 import roundwright.scheduling.audit.Kept;
 import roundwright.scheduling.audit.Verdict;
+import roundwright.scheduling.bounds.StrainBound;
 import roundwright.scheduling.cost.Finding;
 import roundwright.scheduling.cost.Level;
 import roundwright.scheduling.cost.RuleName;
@@ -90,6 +91,7 @@ final class CheckCommand implements Callable<Integer> {
       out.println(json(verdict));
     } else {
       tell(verdict, event, out);
+      StrainBound.of(event, plan).ifPresent(bound -> out.printf("%n%s%n", bound.says()));
     }
     out.flush();
     return verdict.cost().breaches() == 0 ? 0 : 1;

@@ -54,6 +54,7 @@ final class PlanCommand implements Callable<Integer> {
   private static final double DEFAULT_SECONDS = 10;
   private static final double MOST_SECONDS = 86_400;
   private static final int MOST_THREADS = 64;
+  private static final int DEFAULT_THREADS = 4;
   private static final int MOST_WARNINGS = 12;
   private static final long STOP_PATIENCE_SECONDS = 30;
 
@@ -89,9 +90,11 @@ final class PlanCommand implements Callable<Integer> {
   @Option(
       names = "--threads",
       paramLabel = "N",
-      defaultValue = "1",
-      description = "How many searches to run side by side (default: ${DEFAULT-VALUE}).")
-  private int threads;
+      description = {
+        "How many searches to run side by side, the best of which is kept (default: one",
+        "for each processor, at most 4; 1 where --steps is given)."
+      })
+  private Optional<Integer> threads = Optional.empty();
 
   @Spec private CommandSpec spec;
 
@@ -144,8 +147,13 @@ final class PlanCommand implements Callable<Integer> {
     if (steps.isPresent() && steps.get() < 1) {
       throw new Refusal("--steps is " + steps.get() + "; give 1 or more");
     }
-    if (threads < 1 || threads > MOST_THREADS) {
-      throw new Refusal("--threads is " + threads + "; give 1 to " + MOST_THREADS);
+    int searches =
+        threads.orElse(
+            steps.isPresent()
+                ? 1
+                : Math.min(DEFAULT_THREADS, Runtime.getRuntime().availableProcessors()));
+    if (searches < 1 || searches > MOST_THREADS) {
+      throw new Refusal("--threads is " + searches + "; give 1 to " + MOST_THREADS);
     }
     OptionalLong mostSteps = steps.map(OptionalLong::of).orElse(OptionalLong.empty());
     OptionalDouble mostSeconds =
@@ -153,7 +161,7 @@ final class PlanCommand implements Callable<Integer> {
             .map(OptionalDouble::of)
             .orElse(
                 steps.isPresent() ? OptionalDouble.empty() : OptionalDouble.of(DEFAULT_SECONDS));
-    return new Effort(seed, mostSteps, mostSeconds, threads);
+    return new Effort(seed, mostSteps, mostSeconds, searches);
   }
 
   /** Runs when the process is told to end: the best plan so far is still to be written. */

@@ -14,6 +14,8 @@ import roundwright.server.web.Ticket;
  *
  * @param drafts all of the event's, the newest first
  * @param score empty where nothing is planned yet
+ * @param leastStrain no plan with this day plan, groups of these sizes and this crew has less;
+ *     empty where nothing is proved, as where the plan breaks a rule
  * @param findings the worst first, at most as many as a page can show
  * @param moreFindings how many are left out
  */
@@ -24,6 +26,7 @@ public record PlanPage(
     LocalDate day,
     Lanes lanes,
     Optional<Score> score,
+    Optional<BigDecimal> leastStrain,
     List<FindingLine> findings,
     int moreFindings,
     SolvePanel solve) {
@@ -43,6 +46,7 @@ public record PlanPage(
         day,
         lanes,
         score,
+        leastStrain,
         findings,
         moreFindings,
         new SolvePanel(

@@ -10,6 +10,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import org.jooq.TableRecord;
+import roundwright.scheduling.bounds.StrainBound;
 import roundwright.scheduling.cost.Cost;
 import roundwright.scheduling.cost.Finding;
 import roundwright.scheduling.cost.Level;
@@ -34,12 +35,14 @@ final class PlanRows {
 
   /** A plan with nothing in it and no score. */
   static long insertEmpty(Tx tx, EventId event) {
-    return insertPlan(tx, event, null);
+    return insertPlan(tx, event, null, Optional.empty());
   }
 
   /** Writes a plan of the event and gives its id. */
   static long insert(Tx tx, EventId eventId, Event event, Plan plan) {
-    long id = insertPlan(tx, eventId, plan.score().orElse(null));
+    Optional<BigDecimal> least =
+        StrainBound.of(event, plan).map(bound -> rounded(BigDecimal.valueOf(bound.least())));
+    long id = insertPlan(tx, eventId, plan.score().orElse(null), least);
     Map<String, Round> rounds = new HashMap<>();
     event.rounds().forEach(round -> rounds.put(round.id(), round));
     List<PlanGroupRecord> groups = new ArrayList<>();
@@ -82,7 +85,8 @@ final class PlanRows {
     }
   }
 
-  private static long insertPlan(Tx tx, EventId event, Cost score) {
+  private static long insertPlan(
+      Tx tx, EventId event, Cost score, Optional<BigDecimal> leastStrain) {
     return tx.sql()
         .insertInto(PLAN)
         .set(PLAN.EVENT_ID, event.number())
@@ -90,6 +94,7 @@ final class PlanRows {
         .set(PLAN.BREACHES, score == null ? null : score.breaches())
         .set(PLAN.GAPS, score == null ? null : score.gaps())
         .set(PLAN.STRAIN, score == null ? null : rounded(score.strain()))
+        .set(PLAN.LEAST_STRAIN, leastStrain.orElse(null))
         .returning(PLAN.ID)
         .fetchSingle(PLAN.ID);
   }

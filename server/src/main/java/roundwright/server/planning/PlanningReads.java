@@ -106,7 +106,12 @@ public final class PlanningReads {
     }
   }
 
-  private record DraftRow(DraftMark mark, long planId, Optional<Score> score, SolvePanel panel) {}
+  private record DraftRow(
+      DraftMark mark,
+      long planId,
+      Optional<Score> score,
+      Optional<BigDecimal> leastStrain,
+      SolvePanel panel) {}
 
   private static Drafts drafts(Tx tx, EventName event) {
     Field<Integer> newestEdition =
@@ -131,6 +136,7 @@ public final class PlanningReads {
                 PLAN.BREACHES,
                 PLAN.GAPS,
                 PLAN.STRAIN,
+                PLAN.LEAST_STRAIN,
                 EDITION.NUMBER,
                 EDITION.PLAN_ID));
     columns.addAll(List.of(SOLVE_RUN.fields()));
@@ -162,6 +168,7 @@ public final class PlanningReads {
         new DraftMark(0, PlanningWrites.FIRST, "", 0, now.atZone(zone), 0, false),
         0,
         Optional.empty(),
+        Optional.empty(),
         IDLE);
   }
 
@@ -180,6 +187,7 @@ public final class PlanningReads {
         mark,
         row.get(DRAFT.PLAN_ID),
         score(row.get(PLAN.BREACHES), row.get(PLAN.GAPS), row.get(PLAN.STRAIN)),
+        Optional.ofNullable(row.get(PLAN.LEAST_STRAIN)),
         row.get(SOLVE_RUN.ID) == null ? IDLE : panel(row, now));
   }
 
@@ -210,6 +218,7 @@ public final class PlanningReads {
                   day,
                   new LaneMaker(frame, event.zone()).byGroup(tickets, day),
                   draft.get().score(),
+                  draft.get().leastStrain(),
                   findings.stream().limit(MOST_FINDINGS).toList(),
                   Math.max(0, findings.size() - MOST_FINDINGS),
                   draft.get().panel()));

@@ -53,12 +53,14 @@ public record Impossible(
     TOO_MANY_ENTRIES,
     /** A round for whose crews too few people can be had. */
     TOO_FEW_SKILLED,
+    /** More minutes of duty than all who could do it have. */
+    TOO_LITTLE_DUTY_TIME,
     /** Pins that cannot all be kept. */
     PINS_CONTRADICT;
 
     /** Whether gaps may take the place of breaches. */
     public boolean leavesGaps() {
-      return this == TOO_FEW_SKILLED;
+      return this == TOO_FEW_SKILLED || this == TOO_LITTLE_DUTY_TIME;
     }
   }
 
@@ -71,6 +73,7 @@ public record Impossible(
     found.addAll(new RoomForRounds(times, words).find());
     found.addAll(new TimeForPeople(times, words).find());
     found.addAll(new HandsForRounds(times, words).find());
+    found.addAll(new HoursOfDuty(times).find());
     found.addAll(new PinsTogether(times, words).find());
     return found;
   }

@@ -283,7 +283,8 @@ class ImpossibleTest {
     for (int i = 0; i < 7; i++) {
       scene.person("e" + i).enters("cube3", 20);
     }
-    scene.rule("fill", 1);
+    scene.rule("fill", 1).rule("stationsPerScrambler", 0).rule("stationsPerRunner", 0);
+    scene.person("ed").judges();
     // 7 entrants on 2 stations are 4 groups of 25 minutes with 3 setups of 5 between them
     List<Impossible> found = Impossible.of(scene.event());
     assertEquals(List.of(Kind.HALLS_TOO_FULL), found.stream().map(Impossible::kind).toList());
@@ -292,6 +293,31 @@ class ImpossibleTest {
             + " add stations, or take a round out.",
         found.get(0).says());
     assertPaid(found.get(0), cost(scene.event(), 1), "four groups");
+  }
+
+  @Test
+  void moreJudgingThanTheJudgesMayDoADayIsTooMuch() {
+    Scene scene = new Scene().hall("main", 2).open("09:00-18:00").discipline("cube3");
+    scene.round("cube3-a", "cube3", 1).set("countedBy", "average-of-5");
+    for (int i = 0; i < 12; i++) {
+      scene.person("e" + i).enters("cube3", 75);
+    }
+    scene.person("cy").judges().set("maxDutyMinutesPerDay", 60);
+    scene.person("di").judges().set("maxDutyMinutesPerDay", 65);
+    for (String id : List.of("fay", "gil", "hal")) {
+      scene.person(id).runs().scrambles("cube3");
+    }
+    // 12 x 5 x (75 + 45) seconds are 120 minutes; with a slack of 1.2, 144, on the grid 145
+    List<Impossible> found = Impossible.of(scene.event());
+    assertEquals(List.of(Kind.TOO_LITTLE_DUTY_TIME), found.stream().map(Impossible::kind).toList());
+    assertEquals(
+        "Judging takes at least 145 minutes of duty, and the 2 who can have 125, what they solve"
+            + " and their most a day reckoned in; find more people, let them serve longer, or use"
+            + " fewer stations or rounds.",
+        found.get(0).says());
+    assertPaid(found.get(0), cost(scene.event(), 1), "two judges");
+    Event longer = scene.person("ed").judges().set("maxDutyMinutesPerDay", 20).event();
+    assertEquals(List.of(), Impossible.of(longer));
   }
 
   static LongStream wildSeeds() {
@@ -324,7 +350,11 @@ class ImpossibleTest {
     boolean names = finding.people().stream().anyMatch(one.people()::contains);
     boolean sameRound =
         finding.group().map(roundOfGroup::get).map(one.rounds()::contains).orElse(false);
-    return names || sameRound || (finding.group().isEmpty() && finding.people().isEmpty());
+    boolean ofTheEvent = one.people().isEmpty() && one.rounds().isEmpty();
+    return ofTheEvent
+        || names
+        || sameRound
+        || (finding.group().isEmpty() && finding.people().isEmpty());
   }
 
   @ParameterizedTest

@@ -3,18 +3,22 @@ package roundwright.scheduling;
 import static org.junit.jupiter.api.Assertions.assertEquals;
 
 import java.math.BigDecimal;
+import java.time.Instant;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
 import java.util.TreeMap;
 import java.util.stream.LongStream;
 import org.junit.jupiter.params.ParameterizedTest;
 import org.junit.jupiter.params.provider.MethodSource;
 import roundwright.scheduling.audit.Auditor;
+import roundwright.scheduling.audit.Kept;
 import roundwright.scheduling.audit.Verdict;
 import roundwright.scheduling.core.Board;
 import roundwright.scheduling.core.Dice;
 import roundwright.scheduling.core.Frame;
+import roundwright.scheduling.core.KeptDays;
 import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.core.Slot;
@@ -22,6 +26,7 @@ import roundwright.scheduling.cost.Level;
 import roundwright.scheduling.cost.RuleName;
 import roundwright.scheduling.crewing.Arrangement;
 import roundwright.scheduling.model.Event;
+import roundwright.scheduling.model.Plan;
 import roundwright.scheduling.rules.Ledger;
 import roundwright.scheduling.rules.RuleBook;
 
@@ -45,7 +50,11 @@ class BoardAgainstAuditorTest {
     if (frame.groups == 0) {
       return;
     }
-    RuleBook book = new RuleBook(problem);
+    Optional<Kept> kept =
+        seed % 2 == 0 ? Optional.empty() : Optional.of(keptByChance(event, frame, dice));
+    RuleBook book =
+        kept.map(one -> new RuleBook(problem, new KeptDays(problem, one.plan(), one.at())))
+            .orElseGet(() -> new RuleBook(problem));
     Ledger ledger = new Ledger(seatedByChance(frame, dice), book);
     for (int move = 0; move < MOVES; move++) {
       play(ledger, dice);
@@ -63,7 +72,10 @@ class BoardAgainstAuditorTest {
     assertEquals(hard, ledger.hard(), about);
     assertEquals(strain, ledger.strain(), about);
 
-    Verdict verdict = new Auditor(event).audit(Written.plan(Arrangement.of(ledger)));
+    Plan plan = Written.plan(Arrangement.of(ledger));
+    Auditor auditor = new Auditor(event);
+    Verdict verdict =
+        kept.map(one -> auditor.audit(plan, one)).orElseGet(() -> auditor.audit(plan));
     Map<RuleName, BigDecimal> apart = new TreeMap<>(priced(verdict));
     book.explain(ledger.board)
         .forEach((rule, price) -> apart.merge(rule, units(rule, price).negate(), BigDecimal::add));
@@ -73,6 +85,17 @@ class BoardAgainstAuditorTest {
     assertEquals(verdict.cost().gaps(), hard % RuleBook.BREACH, about);
     BigDecimal inAll = verdict.cost().strain().subtract(BigDecimal.valueOf(strain, 6)).abs();
     assertEquals(-1, inAll.compareTo(TWENTIETH), about + ": strain is " + inAll + " apart");
+  }
+
+  /** What people might have been told: another arrangement of the same day, disturbed or not. */
+  private static Kept keptByChance(Event event, Frame frame, Dice dice) {
+    Ledger told = new Ledger(seatedByChance(frame, dice), new RuleBook(frame.problem));
+    Plan plan = Written.plan(Arrangement.of(told));
+    Plan disturbed = RandomPlans.disturbed(plan, event, dice.below(1_000_000));
+    Instant noon = LocalClock.instant(frame.start[frame.groups / 2]);
+    return new Kept(
+        dice.below(4) == 0 ? plan : disturbed,
+        dice.below(2) == 0 ? Optional.empty() : Optional.of(noon));
   }
 
   /** Groups anywhere near the halls' times, overlapping, off the grid and out of order. */

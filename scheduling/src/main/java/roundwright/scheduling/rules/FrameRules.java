@@ -17,7 +17,10 @@ import roundwright.scheduling.model.Round;
 final class FrameRules {
   private FrameRules() {}
 
-  static List<FrameRule> breaches() {
+  /**
+   * @param anyNumbers with a kept plan groups keep their numbers, whatever their order now is
+   */
+  static List<FrameRule> breaches(boolean anyNumbers) {
     return List.of(
         new HallClash(),
         new HallClosed(),
@@ -25,7 +28,7 @@ final class FrameRules {
         new RoundOrder(),
         new RoundWindow(),
         new OffGrid(),
-        new WrongCount(),
+        new WrongCount(anyNumbers),
         new PinMoved());
   }
 
@@ -183,7 +186,7 @@ final class FrameRules {
   /**
    * One for each round with another number of groups than it must have, or numbered out of order.
    */
-  record WrongCount() implements FrameRule {
+  record WrongCount(boolean anyNumbers) implements FrameRule {
     @Override
     public RuleName name() {
       return RuleName.WRONG_COUNT;
@@ -194,7 +197,7 @@ final class FrameRules {
       return IntStream.range(0, frame.problem.rounds).filter(r -> wrong(frame, r)).count();
     }
 
-    private static boolean wrong(Frame frame, int round) {
+    private boolean wrong(Frame frame, int round) {
       Round given = frame.problem.roundList.get(round);
       int[] groups = frame.groupsOf[round];
       if (given.groups().isPresent() && given.groups().getAsInt() != groups.length) {
@@ -205,7 +208,9 @@ final class FrameRules {
       }
       boolean split = groups.length > 1 && frame.problem.mustBeWhole(round);
       boolean misnumbered =
-          IntStream.range(0, groups.length).anyMatch(i -> frame.number[groups[i]] != i + 1);
+          anyNumbers
+              ? IntStream.of(groups).map(g -> frame.number[g]).distinct().count() < groups.length
+              : IntStream.range(0, groups.length).anyMatch(i -> frame.number[groups[i]] != i + 1);
       return split || misnumbered;
     }
   }

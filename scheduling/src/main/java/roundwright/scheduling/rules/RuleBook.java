@@ -3,9 +3,12 @@ package roundwright.scheduling.rules;
 import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Optional;
+import java.util.stream.Stream;
 import roundwright.scheduling.core.Board;
 import roundwright.scheduling.core.Frame;
 import roundwright.scheduling.core.GroupRow;
+import roundwright.scheduling.core.KeptDays;
 import roundwright.scheduling.core.PersonRow;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.cost.RuleName;
@@ -28,10 +31,25 @@ public final class RuleBook {
   private final List<FrameRule> frameStrains;
 
   public RuleBook(Problem problem) {
+    this(problem, Optional.empty());
+  }
+
+  /** The rules of an event whose people have been told a plan. */
+  public RuleBook(Problem problem, KeptDays kept) {
+    this(problem, Optional.of(kept));
+  }
+
+  private RuleBook(Problem problem, Optional<KeptDays> kept) {
     var rules = problem.event.rules();
-    personBreaches = PersonRules.breaches().toArray(PersonRule[]::new);
+    personBreaches =
+        Stream.concat(
+                PersonRules.breaches().stream(),
+                kept.stream().flatMap(days -> KeptRules.breaches(days).stream()))
+            .toArray(PersonRule[]::new);
     personStrains =
-        PersonRules.strains(problem).stream()
+        Stream.concat(
+                PersonRules.strains(problem).stream(),
+                kept.stream().flatMap(days -> KeptRules.strains(problem, days).stream()))
             .filter(rule -> rules.weight(rule.name()).signum() > 0)
             .toArray(PersonRule[]::new);
     groupBreaches = GroupRules.breaches().toArray(GroupRule[]::new);
@@ -40,7 +58,7 @@ public final class RuleBook {
         GroupRules.strains(problem).stream()
             .filter(rule -> rules.weight(rule.name()).signum() > 0)
             .toArray(GroupRule[]::new);
-    frameBreaches = FrameRules.breaches();
+    frameBreaches = FrameRules.breaches(kept.isPresent());
     frameStrains = FrameRules.strains(problem);
   }
 

@@ -27,6 +27,9 @@ final class Moment {
 
   final int[] groups;
 
+  /** An epoch minute at which all of them run. */
+  final int minute;
+
   private final Standing standing;
   private final Board board;
   private final Frame frame;
@@ -36,8 +39,9 @@ final class Moment {
   /** Of each person: the column they fill, NONE, or PINNED where nobody may move them. */
   private final int[] column;
 
-  private Moment(Standing standing, int[] groups) {
+  private Moment(Standing standing, int minute, int[] groups) {
     this.standing = standing;
+    this.minute = minute;
     this.groups = groups;
     board = standing.board;
     frame = standing.frame;
@@ -73,6 +77,7 @@ final class Moment {
         moments.add(
             new Moment(
                 standing,
+                minute,
                 IntStream.range(0, frame.groups)
                     .filter(other -> frame.start[other] <= minute && minute < frame.end[other])
                     .toArray()));

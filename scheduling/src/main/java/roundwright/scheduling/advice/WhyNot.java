@@ -1,5 +1,6 @@
 package roundwright.scheduling.advice;
 
+import java.time.Instant;
 import java.util.ArrayList;
 import java.util.Collections;
 import java.util.EnumMap;
@@ -7,6 +8,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.stream.Collectors;
+import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.crewing.Standing;
 import roundwright.scheduling.model.Role;
 
@@ -43,10 +45,12 @@ public record WhyNot(
   /**
    * Duties of one time that together want more people than can have any of them.
    *
+   * @param at a moment at which all of them run; the shortage holds whatever becomes of the duties
+   *     of all groups that run then
    * @param wanted by all of the duties, those of people pinned to theirs apart
    * @param people ids of all who could have one of them, and most of whom do
    */
-  public record Shortage(List<Duties> duties, int wanted, List<String> people) {
+  public record Shortage(Instant at, List<Duties> duties, int wanted, List<String> people) {
     public Shortage {
       duties = List.copyOf(duties);
       people = List.copyOf(people);
@@ -162,7 +166,10 @@ public record WhyNot(
         wanted += moment.wanted(c);
       }
       return new Shortage(
-          duties, wanted, outcome.people().stream().map(standing::personId).toList());
+          LocalClock.instant(moment.minute),
+          duties,
+          wanted,
+          outcome.people().stream().map(standing::personId).toList());
     }
 
     private String says(Moment moment, Moment.Outcome outcome, Shortage shortage) {
@@ -190,7 +197,9 @@ public record WhyNot(
       return "the "
           + duties
           + (shortage.wanted == 1 ? " is 1 duty" : " are " + shortage.wanted + " duties")
-          + " at one time, and "
+          + " at "
+          + words.timeIn(standing.groups.get(group).hall(), moment.minute)
+          + ", and "
           + (shortage.people.isEmpty()
               ? "nobody"
               : "only " + Wording.count(shortage.people.size(), "free person"))

@@ -227,18 +227,11 @@ class AdviceOnPlansTest {
     }
   }
 
-  /** All groups at the time of the duties named: whose crews an answer may change. */
+  /** All groups at the moment named: whose crews an answer may change. */
   private static List<Group> runningWith(Draft draft, WhyNot.Shortage shortage) {
-    List<Group> named = new ArrayList<>();
-    shortage.duties().forEach(duties -> named.add(draft.group(duties.group())));
     return draft.plan().groups().stream()
-        .filter(
-            group ->
-                named.stream()
-                    .allMatch(
-                        other ->
-                            group.start().isBefore(other.end())
-                                && other.start().isBefore(group.end())))
+        .filter(group -> !group.start().isAfter(shortage.at()))
+        .filter(group -> group.end().isAfter(shortage.at()))
         .toList();
   }
 

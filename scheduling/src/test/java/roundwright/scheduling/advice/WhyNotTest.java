@@ -83,8 +83,8 @@ class WhyNotTest {
     assertEquals(List.of(new WhyNot.Duties("g1", Role.SCRAMBLER, 4)), shortage.duties());
     assertEquals(List.of("sam", "sol"), shortage.people());
     assertEquals(
-        "The 4 scramblers of group 1 of cube3 round 1 (Sat 8 May 09:00-09:30) are 4 duties at one"
-            + " time, and only 2 free people can take them: 5 have the skill, 1 is away, 2 solve"
+        "The 4 scramblers of group 1 of cube3 round 1 (Sat 8 May 09:00-09:30) are 4 duties at Sat"
+            + " 8 May 09:00, and only 2 free people can take them: 5 have the skill, 1 is away, 2 solve"
             + " at the time; that holds while those who solve and the duties of other times stay;"
             + " of 7 people, 2 lack the skill, 1 is away, 2 solve at the time, 2 are on other"
             + " duties.",

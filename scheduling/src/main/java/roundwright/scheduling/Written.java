@@ -2,8 +2,10 @@ package roundwright.scheduling;
 
 import java.util.ArrayList;
 import java.util.Comparator;
+import java.util.HashMap;
 import java.util.HashSet;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import roundwright.scheduling.core.Frame;
@@ -21,6 +23,11 @@ final class Written {
   private Written() {}
 
   static Plan plan(Arrangement arrangement) {
+    return plan(arrangement, new Plan(List.of(), Optional.empty(), List.of()));
+  }
+
+  /** The same where some of the groups have been in a plan before, whose ids they keep. */
+  static Plan plan(Arrangement arrangement, Plan kept) {
     Frame frame = arrangement.frame;
     Problem problem = frame.problem;
     List<List<String>> competitors = lists(frame.groups);
@@ -41,7 +48,10 @@ final class Written {
     }
     crews.forEach(crew -> crew.sort(Comparator.naturalOrder()));
     List<Group> groups = new ArrayList<>();
+    Map<String, String> known = new HashMap<>();
+    kept.groups().forEach(group -> known.put(group.round() + "/" + group.number(), group.id()));
     Set<String> used = new HashSet<>();
+    kept.groups().forEach(group -> used.add(group.id()));
     for (int g = 0; g < frame.groups; g++) {
       String round = problem.roundList.get(frame.round[g]).id();
       if (competitors.get(g).isEmpty()) {
@@ -49,7 +59,7 @@ final class Written {
       }
       groups.add(
           new Group(
-              id(round, frame.number[g], used),
+              idOf(round, frame.number[g], known, used),
               round,
               frame.number[g],
               problem.hallList.get(frame.hall[g]).id(),
@@ -68,6 +78,12 @@ final class Written {
       lists.add(new ArrayList<>());
     }
     return lists;
+  }
+
+  private static String idOf(
+      String round, int number, Map<String, String> known, Set<String> used) {
+    String kept = known.get(round + "/" + number);
+    return kept != null ? kept : id(round, number, used);
   }
 
   /** An id that says nothing and is the same whenever the same group is planned first. */

@@ -37,6 +37,7 @@ final class ArrowsTest {
               Map.entry("timetable", List.of("core", "rules", "forecast")),
               Map.entry("crewing", List.of("rules", "flow")),
               Map.entry("bounds", List.of("crewing", "flow")),
+              Map.entry("repair", List.of("timetable", "crewing")),
               Map.entry("advice", List.of("crewing", "flow", "audit"))));
 
   private static final JavaClasses CLASSES =

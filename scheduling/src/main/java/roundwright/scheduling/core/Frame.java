@@ -11,7 +11,8 @@ import roundwright.scheduling.model.Rules;
 /**
  * A day plan laid out for pricing: groups in order of time, so that a person's commitments in order
  * of group are in order of time, and bitsets over groups instead of minutes, so that "is free" is a
- * word or two of AND. Immutable after construction; shared freely between threads.
+ * word or two of AND. Immutable once groups are frozen, if any are; then shared freely between
+ * threads.
  *
  * <p>Layout: {@code words} longs a set; the set of group {@code g} in {@link #conflicts} begins at
  * {@code g * words}, that of person {@code p} in {@link #free} at {@code p * words}. A
@@ -69,6 +70,9 @@ public final class Frame {
 
   /** The group pinned to a seat, or -1. */
   public final int[] seatPin;
+
+  /** Of each group: whether nobody comes, goes or changes duty. */
+  public final boolean[] frozen;
 
   /** Of each group and role: who has the skill and is free, in order of person. */
   public final int[][] candidates;
@@ -151,6 +155,7 @@ public final class Frame {
     placeRole = new int[places];
     placePin = new int[places];
     Arrays.fill(placePin, -1);
+    frozen = new boolean[groups];
     candidates = new int[groups * 3][];
     layOutPlaces(dutyPins);
     seatPin = new int[problem.seats];
@@ -312,6 +317,20 @@ public final class Frame {
 
   public boolean conflict(int one, int other) {
     return (conflicts[one * words + (other >>> 6)] & (1L << other)) != 0;
+  }
+
+  /** Leaves a group as it stands on a board, for good: to be done before a search begins. */
+  public void freeze(int group, Board board) {
+    frozen[group] = true;
+    for (int i = 0; i < board.size[group]; i++) {
+      seatPin[board.member(group, i)] = group;
+    }
+    for (int at = placeStart[group * 3]; at < placeStart[group * 3 + 3]; at++) {
+      placePin[at] = board.placePerson[at];
+    }
+    for (int role = 0; role < 3; role++) {
+      candidates[group * 3 + role] = new int[0];
+    }
   }
 
   private int seededPlace(int seat) {

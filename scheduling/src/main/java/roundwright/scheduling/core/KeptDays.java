@@ -19,6 +19,9 @@ import roundwright.scheduling.model.Role;
  * round or hall that the event no longer has gets an index of its own beyond those it has.
  */
 public final class KeptDays {
+  /** A commitment whose start and end are no further apart than this, each, is the same one. */
+  public static final int MOST_APART_MINUTES = 5;
+
   public final int[][] key;
   public final int[][] hall;
   public final int[][] start;

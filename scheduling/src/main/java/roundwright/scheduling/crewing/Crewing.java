@@ -123,6 +123,29 @@ public final class Crewing {
   }
 
   /**
+   * Like {@link #polish}, but only where somebody's day or a group breaks a rule, or a duty is
+   * empty: leaves alone what is whole.
+   */
+  public void mend(Halt halt) {
+    boolean[] stale = new boolean[parts.moments()];
+    for (int turn = 0; turn < MOST_POLISHES && ledger.hard() > 0 && !halt.now(); turn++) {
+      long before = ledger.hard();
+      untangling.everybody(halt);
+      relief.everyGroup(halt);
+      parts.markTroubled(stale);
+      polishMoments(stale, halt);
+      for (int round : roundsWithGroups()) {
+        if (!halt.now() && frame.groupsOf[round].length > 1 && parts.isTroubled(round)) {
+          parts.seatRound(round);
+        }
+      }
+      if (ledger.hard() >= before) {
+        return;
+      }
+    }
+  }
+
+  /**
    * Solves each moment and each round exactly in turn, until nothing is gained. After the first
    * turn a moment is looked at again only where something near it in time got better.
    */

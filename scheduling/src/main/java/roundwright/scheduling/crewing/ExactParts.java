@@ -87,6 +87,36 @@ final class ExactParts {
     }
   }
 
+  /** Marks the moments of groups that lack crew, and those of people who break a rule. */
+  void markTroubled(boolean[] marks) {
+    for (int moment = 0; moment < marks.length; moment++) {
+      for (int g : moments.get(moment)) {
+        marks[moment] |= ledger.groupHard(g) > 0 || hasTroubledCrew(g);
+      }
+    }
+  }
+
+  private boolean hasTroubledCrew(int g) {
+    for (int at = frame.placeStart[g * 3]; at < frame.placeStart[g * 3 + 3]; at++) {
+      int person = board.placePerson[at];
+      if (person >= 0 && ledger.personHard(person) > 0) {
+        return true;
+      }
+    }
+    return false;
+  }
+
+  /** Whether an entrant of a round, or a group of it, breaks a rule. */
+  boolean isTroubled(int round) {
+    for (int seat = problem.seatStart[round]; seat < problem.seatStart[round + 1]; seat++) {
+      if (ledger.personHard(problem.seatPerson[seat]) > 0) {
+        return true;
+      }
+    }
+    return Arrays.stream(frame.groupsOf[round])
+        .anyMatch(g -> ledger.groupHard(g) >= roundwright.scheduling.rules.RuleBook.BREACH);
+  }
+
   /** Duties wanted at a moment for each person who could take one: where crews are scarcest. */
   double scarcity(int moment) {
     int wanted = 0;
@@ -170,13 +200,18 @@ final class ExactParts {
       for (int role = 0; role < 3; role++) {
         boolean able = could && problem.skilled(person, frame.round[g], role);
         long kin = role == 0 && able ? kinWeight * board.kinSolving(person, g) : 0;
-        transport.cost(row, i * 3 + role, able ? change + kin : Transport.FORBIDDEN);
+        long own =
+            able && ledger.tellsRolesApart()
+                ? ledger.priceWith(person, g << 2 | role) - now
+                : change;
+        transport.cost(row, i * 3 + role, able ? own + kin : Transport.FORBIDDEN);
       }
     }
   }
 
   /**
-   * A role the person can have: in their own price all of these cost alike, and others a breach.
+   * A role the person can have: in their own price all of these cost alike, but where people have
+   * been told theirs, and others a breach.
    */
   private int skillOf(int person, int round) {
     for (int role = 0; role < 3; role++) {
@@ -227,7 +262,7 @@ final class ExactParts {
     long now = ledger.priceNow(person);
     for (int i = 0; i < groups.length; i++) {
       int g = groups[i];
-      if (pinned >= 0 && pinned != g) {
+      if (pinned >= 0 ? pinned != g : frame.frozen[g]) {
         transport.cost(row, i, Transport.FORBIDDEN);
         continue;
       }

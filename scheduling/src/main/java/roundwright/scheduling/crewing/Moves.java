@@ -144,7 +144,7 @@ final class Moves {
       return false;
     }
     int to = groups[dice.below(groups.length)];
-    if (to == board.seatGroup[seat] || !refill.reseat(seat, to)) {
+    if (to == board.seatGroup[seat] || frame.frozen[to] || !refill.reseat(seat, to)) {
       return false;
     }
     refill.fill();
@@ -191,7 +191,11 @@ final class Moves {
     int[] groups = frame.groupsOf[problem.seatRound[seat]];
     int from = board.seatGroup[seat];
     int to = groups[dice.below(groups.length)];
-    if (from < 0 || from == to || frame.seatPin[seat] >= 0 || !refill.reseat(seat, to)) {
+    if (from < 0
+        || from == to
+        || frame.frozen[to]
+        || frame.seatPin[seat] >= 0
+        || !refill.reseat(seat, to)) {
       return false;
     }
     if (dice.below(4) > 0) {

@@ -122,6 +122,7 @@ final class Relief {
   private boolean mayMove(int seat, int from, int to) {
     int person = problem.seatPerson[seat];
     return frame.seatPin[seat] < 0
+        && !frame.frozen[to]
         && frame.isFree(person, to)
         && refill.solvesOnlyIn(person, from, to);
   }

@@ -108,7 +108,8 @@ final class Untangling {
   private boolean suits(int who, int seat, int group) {
     int round = frame.round[group];
     int minutes = frame.end[group] - frame.start[group];
-    return (frame.isFree(who, group)
+    return (!frame.frozen[group] || board.seatGroup[seat] == group)
+        && (frame.isFree(who, group)
             || (problem.roundLikely[round]
                 && !problem.busy(who, frame.start[group], frame.end[group])))
         && (problem.roundList.get(round).minutesPerGroup().isPresent()

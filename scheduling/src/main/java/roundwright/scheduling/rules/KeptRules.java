@@ -9,7 +9,6 @@ import roundwright.scheduling.cost.RuleName;
 
 /** The rules over what a person was told in a kept plan and where they now are. */
 final class KeptRules {
-  private static final int MOST_APART_MINUTES = 5;
   private static final int FREE = -1;
 
   private KeptRules() {}
@@ -18,10 +17,13 @@ final class KeptRules {
     return kept.pastBefore == Problem.NEVER ? List.of() : List.of(new PastChanged(kept));
   }
 
-  static List<PersonRule> strains(Problem problem, KeptDays kept) {
+  /**
+   * @param times how many times their weight the two rules count
+   */
+  static List<PersonRule> strains(Problem problem, KeptDays kept, int times) {
     return List.of(
-        new Changed(kept, Weights.millionths(problem, RuleName.CHANGED)),
-        new Told(kept, Weights.millionths(problem, RuleName.TOLD)));
+        new Changed(kept, times * Weights.millionths(problem, RuleName.CHANGED)),
+        new Told(kept, times * Weights.millionths(problem, RuleName.TOLD)));
   }
 
   /**
@@ -79,8 +81,8 @@ final class KeptRules {
       int p = row.person;
       return kept.key[p][then] == keyNow(now)
           && kept.hall[p][then] == row.hall[now]
-          && Math.abs(kept.start[p][then] - row.start[now]) <= MOST_APART_MINUTES
-          && Math.abs(kept.end[p][then] - row.end[now]) <= MOST_APART_MINUTES;
+          && Math.abs(kept.start[p][then] - row.start[now]) <= KeptDays.MOST_APART_MINUTES
+          && Math.abs(kept.end[p][then] - row.end[now]) <= KeptDays.MOST_APART_MINUTES;
     }
 
     /**

@@ -281,6 +281,11 @@ public final class Ledger {
     return book.hard(personRow) / RuleBook.BREACH * BREACH_IN_TRIALS + book.strain(personRow);
   }
 
+  /** Whether one duty or another in a group can make a difference to a person's own price. */
+  public boolean tellsRolesApart() {
+    return book.hasKept();
+  }
+
   /** Like {@link #priceNow}, with one commitment more. */
   public long priceWith(int person, int commitment) {
     board.add(person, commitment);

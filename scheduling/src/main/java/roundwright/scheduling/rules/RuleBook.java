@@ -29,18 +29,29 @@ public final class RuleBook {
   private final GroupRule[] groupStrains;
   private final List<FrameRule> frameBreaches;
   private final List<FrameRule> frameStrains;
+  private final boolean hasKept;
 
   public RuleBook(Problem problem) {
-    this(problem, Optional.empty());
+    this(problem, Optional.empty(), 1);
   }
 
   /** The rules of an event whose people have been told a plan. */
   public RuleBook(Problem problem, KeptDays kept) {
-    this(problem, Optional.of(kept));
+    this(problem, kept, 1);
   }
 
-  private RuleBook(Problem problem, Optional<KeptDays> kept) {
+  /**
+   * The same for a search that is to change little, whatever comfort it costs.
+   *
+   * @param times how many times their weight changes count
+   */
+  public RuleBook(Problem problem, KeptDays kept, int times) {
+    this(problem, Optional.of(kept), times);
+  }
+
+  private RuleBook(Problem problem, Optional<KeptDays> kept, int times) {
     var rules = problem.event.rules();
+    hasKept = kept.isPresent();
     personBreaches =
         Stream.concat(
                 PersonRules.breaches().stream(),
@@ -49,7 +60,7 @@ public final class RuleBook {
     personStrains =
         Stream.concat(
                 PersonRules.strains(problem).stream(),
-                kept.stream().flatMap(days -> KeptRules.strains(problem, days).stream()))
+                kept.stream().flatMap(days -> KeptRules.strains(problem, days, times).stream()))
             .filter(rule -> rules.weight(rule.name()).signum() > 0)
             .toArray(PersonRule[]::new);
     groupBreaches = GroupRules.breaches().toArray(GroupRule[]::new);
@@ -60,6 +71,11 @@ public final class RuleBook {
             .toArray(GroupRule[]::new);
     frameBreaches = FrameRules.breaches(kept.isPresent());
     frameStrains = FrameRules.strains(problem);
+  }
+
+  /** Whether people have been told a plan. */
+  boolean hasKept() {
+    return hasKept;
   }
 
   long hard(PersonRow row) {

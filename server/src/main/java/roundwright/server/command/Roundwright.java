@@ -19,6 +19,7 @@ import picocli.CommandLine.Spec;
     subcommands = {
       PlanCommand.class,
       CheckCommand.class,
+      RepairCommand.class,
       ForecastCommand.class,
       AdviseCommand.class,
       WhyCommand.class,

@@ -81,6 +81,40 @@ final class CommandLineTest {
   }
 
   @Test
+  void aRepairKeepsWhatPeopleWereToldAndSaysWhatChanges() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path told = folder.resolve("told.json");
+    assertEquals(0, run("plan", event, "--out", told, "--steps", 2000).code());
+    Path same = folder.resolve("same.json");
+    Outcome untouched = run("repair", event, told, "--out", same);
+    assertEquals("", untouched.err());
+    assertEquals(0, untouched.code(), untouched.out());
+    assertTrue(untouched.out().contains("Commitments that change: 0; "), untouched.out());
+    assertTrue(untouched.out().contains("People to be told: 0; at least 0."), untouched.out());
+    Outcome checked = run("check", event, same, "--kept", told, "--json");
+    assertFalse(checked.out().contains("changed"), checked.out());
+  }
+
+  @Test
+  void aRepairRefusesScopesThatExcludeEachOtherAndDatesThatAreNone() throws IOException {
+    Path event = file("event.json", EVENT);
+    Path told = folder.resolve("told.json");
+    run("plan", event, "--out", told, "--steps", 2000);
+    Object[] common = {"repair", event, told, "--out", folder.resolve("plan.json")};
+    assertTrue(
+        run(with(common, "--crews-only", "--broken-only")).err().contains("give one of them"));
+    assertTrue(run(with(common, "--day", "Saturday")).err().contains("give a date such as"));
+    assertTrue(run(with(common, "--hall", "attic")).err().contains("give the id of a hall"));
+    assertEquals(2, run(with(common, "--round", "none")).code());
+  }
+
+  private static Object[] with(Object[] common, Object... more) {
+    return java.util.stream.Stream.concat(
+            java.util.Arrays.stream(common), java.util.Arrays.stream(more))
+        .toArray();
+  }
+
+  @Test
   void a_plan_is_written_and_checks_clean() throws IOException {
     Path event = file("event.json", EVENT);
     Path plan = folder.resolve("plan.json");

@@ -1,0 +1,69 @@
+package roundwright.scheduling;
+
+import java.time.Instant;
+import java.util.List;
+import java.util.Optional;
+import roundwright.scheduling.audit.Auditor;
+import roundwright.scheduling.audit.Kept;
+import roundwright.scheduling.audit.Verdict;
+import roundwright.scheduling.cost.Finding;
+import roundwright.scheduling.cost.RuleName;
+import roundwright.scheduling.crewing.Arrangement;
+import roundwright.scheduling.model.Event;
+import roundwright.scheduling.model.Plan;
+import roundwright.scheduling.repair.LeastChange;
+import roundwright.scheduling.repair.Mending;
+import roundwright.scheduling.repair.Scope;
+
+/** Keeps a plan that people have been told for an event that has changed, and changes little. */
+public final class Repair {
+  private Repair() {}
+
+  /**
+   * What came of a repair.
+   *
+   * @param plan priced by the auditor against the kept one
+   * @param changed commitments that are not what people were told; a moved one counts once
+   * @param told people with such commitments
+   * @param least no plan that fills as many duties changes less
+   */
+  public record Repaired(Plan plan, int changed, int told, LeastChange least) {
+    /** Every change, a sentence each. */
+    public List<String> changes() {
+      return plan.findings().stream()
+          .filter(finding -> finding.rule() == RuleName.CHANGED)
+          .map(Finding::says)
+          .toList();
+    }
+  }
+
+  /**
+   * Repairs a plan.
+   *
+   * @param event as it now is
+   * @param kept the plan people were told
+   * @param at what starts before this moment stays as it is
+   * @param scope what may change
+   */
+  public static Repaired repair(
+      Event event, Plan kept, Optional<Instant> at, Scope scope, Effort effort, Progress progress) {
+    Spending spending = new Spending(effort, progress);
+    Mending mending = new Mending(event, kept, at, scope, effort.seed(), spending::over);
+    Arrangement arrangement = mending.mended();
+    Plan plan = Written.plan(arrangement, kept);
+    Verdict verdict = new Auditor(event).audit(plan, new Kept(kept, at));
+    int changed = amount(verdict, RuleName.CHANGED);
+    int told = amount(verdict, RuleName.TOLD);
+    LeastChange least = mending.leastChange(arrangement);
+    return new Repaired(
+        new Plan(plan.groups(), Optional.of(verdict.cost()), verdict.findings()),
+        changed,
+        told,
+        new LeastChange(Math.min(changed, least.commitments()), Math.min(told, least.people())));
+  }
+
+  private static int amount(Verdict verdict, RuleName rule) {
+    var amount = verdict.amounts().get(rule);
+    return amount == null ? 0 : amount.intValueExact();
+  }
+}

@@ -1,0 +1,190 @@
+package roundwright.scheduling.repair;
+
+import java.time.Instant;
+import java.time.ZoneId;
+import java.util.ArrayList;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.stream.IntStream;
+import roundwright.scheduling.core.Board;
+import roundwright.scheduling.core.Dice;
+import roundwright.scheduling.core.KeptDays;
+import roundwright.scheduling.core.LocalClock;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.core.Slot;
+import roundwright.scheduling.crewing.Arrangement;
+import roundwright.scheduling.crewing.Crewing;
+import roundwright.scheduling.crewing.Halt;
+import roundwright.scheduling.model.Event;
+import roundwright.scheduling.model.Group;
+import roundwright.scheduling.model.Plan;
+import roundwright.scheduling.model.Venue;
+import roundwright.scheduling.rules.Ledger;
+import roundwright.scheduling.rules.RuleBook;
+
+/**
+ * The repair of a kept plan for an event that has changed: the day plan laid out anew with each
+ * group where it stood if it can be, everybody carried over, and what is then broken or empty
+ * mended with the fewest changes: first exactly, moment by moment, and by search only where that
+ * leaves something to mend. One use each; not thread-safe.
+ */
+public final class Mending {
+  /** Changes before comfort: one outweighs what a day can gain in any other rule. */
+  private static final int CHANGES_FIRST = 50;
+
+  private static final long SEARCH_MOVES_PER_PLACE = 200;
+  private static final int MOST_SEARCHES = 3;
+
+  private final Event event;
+  private final Plan kept;
+  private final Scope scope;
+  private final Problem problem;
+  private final KeptDays days;
+  private final RuleBook book;
+  private final long seed;
+  private final Halt halt;
+
+  /**
+   * @param event as it now is
+   * @param at what starts before this moment stays as it is
+   * @param seed of all chance
+   * @param halt ends the search with what it has
+   */
+  public Mending(Event event, Plan kept, Optional<Instant> at, Scope scope, long seed, Halt halt) {
+    this.event = event;
+    this.kept = kept;
+    this.scope = scope;
+    this.seed = seed;
+    this.halt = halt;
+    problem = new Problem(event);
+    days = new KeptDays(problem, kept, at);
+    book = new RuleBook(problem, days, CHANGES_FIRST);
+  }
+
+  /** The repaired plan as an arrangement over its day plan. */
+  public Arrangement mended() {
+    Arrangement best = null;
+    for (Shifting.Way way : Shifting.Way.values()) {
+      if (best != null && halt.now()) {
+        break;
+      }
+      Arrangement found = mended(new Shifting(problem, way, days.pastBefore).lay(standees()));
+      best = best == null || found.compareTo(best) < 0 ? found : best;
+    }
+    return best;
+  }
+
+  /** At least so much changes in any plan that fills as many duties. */
+  public LeastChange leastChange(Arrangement arrangement) {
+    return LeastChange.of(arrangement.board(), days);
+  }
+
+  private Arrangement mended(List<Standee> laid) {
+    List<Standee> peopled = withoutEmpty(laid);
+    Board board = new Carrying(problem, peopled).board(scope.depth());
+    Dice dice = new Dice(seed);
+    Crewing crewing = Crewing.from(Arrangement.of(new Ledger(board, book)), book, dice);
+    crewing.mend(halt);
+    for (int search = 0; search < MOST_SEARCHES && crewing.hard() > 0 && !halt.now(); search++) {
+      long hard = crewing.hard();
+      crewing.anneal(budget(board.frame.places), (h, s, m) -> {});
+      crewing.mend(halt);
+      if (crewing.hard() >= hard) {
+        break;
+      }
+    }
+    return crewing.arrangement();
+  }
+
+  private Crewing.Budget budget(int places) {
+    double most = SEARCH_MOVES_PER_PLACE * Math.max(1, places);
+    return new Crewing.Budget() {
+      @Override
+      public double used(long moves) {
+        return halt.now() ? 1 : moves / most;
+      }
+
+      @Override
+      public double likelyMoves() {
+        return most;
+      }
+    };
+  }
+
+  private List<Standee> standees() {
+    Map<String, Integer> rounds = new HashMap<>();
+    problem.roundList.forEach(round -> rounds.put(round.id(), rounds.size()));
+    Map<String, Integer> halls = new HashMap<>();
+    problem.hallList.forEach(hall -> halls.put(hall.id(), halls.size()));
+    List<Standee> standees = new ArrayList<>();
+    for (Group group : kept.groups()) {
+      Integer round = rounds.get(group.round());
+      if (round == null || problem.entrants(round) == 0) {
+        continue;
+      }
+      int hall = halls.getOrDefault(group.hall(), -1);
+      int start = LocalClock.epochMinute(group.start());
+      Slot slot =
+          new Slot(
+              round,
+              group.number(),
+              hall,
+              group.stations(),
+              start,
+              LocalClock.epochMinute(group.end()));
+      boolean frozen =
+          hall >= 0 && (start < days.pastBefore || !scope.holds(group, zone(group.hall())));
+      standees.add(new Standee(Optional.of(group), slot, frozen));
+    }
+    return standees;
+  }
+
+  private ZoneId zone(String hall) {
+    return event.venues().stream()
+        .filter(venue -> venue.halls().stream().anyMatch(one -> one.id().equals(hall)))
+        .findFirst()
+        .map(Venue::zone)
+        .orElse(event.zone());
+  }
+
+  /** No more groups of a round than it has entrants, and none that has lost everybody. */
+  private List<Standee> withoutEmpty(List<Standee> laid) {
+    List<Standee> left = new ArrayList<>(laid);
+    for (int round = 0; round < problem.rounds; round++) {
+      int wanted = round;
+      List<Standee> own =
+          new ArrayList<>(left.stream().filter(one -> one.slot().round() == wanted).toList());
+      List<Standee> lost = own.stream().filter(this::hasLostEverybody).toList();
+      int room =
+          own.stream().mapToInt(one -> problem.largestSize(wanted, one.slot().stations())).sum();
+      for (Standee one : lost) {
+        int held = problem.largestSize(round, one.slot().stations());
+        if (own.size() > 1 && room - held >= problem.entrants(round)) {
+          room -= held;
+          own.remove(one);
+          left.remove(one);
+        }
+      }
+    }
+    return left;
+  }
+
+  private boolean hasLostEverybody(Standee one) {
+    return one.kept().isPresent()
+        && one.kept().get().competitors().stream()
+            .noneMatch(
+                id ->
+                    IntStream.of(seats(one.slot().round()))
+                        .anyMatch(seat -> personId(seat).equals(id)));
+  }
+
+  private int[] seats(int round) {
+    return IntStream.range(problem.seatStart[round], problem.seatStart[round + 1]).toArray();
+  }
+
+  private String personId(int seat) {
+    return problem.personList.get(problem.seatPerson[seat]).id();
+  }
+}

@@ -1,0 +1,228 @@
+package roundwright.scheduling.repair;
+
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.Comparator;
+import java.util.List;
+import java.util.Optional;
+import roundwright.scheduling.core.LocalClock;
+import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.core.Slot;
+
+/**
+ * Lays a kept day plan out anew, each group where it stood if it still can be there, and finds a
+ * place for those that cannot and for groups that entrants need more. In order of time; three ways
+ * to find a place, of which the caller takes what comes out best.
+ */
+final class Shifting {
+  private static final int NOWHERE = Integer.MAX_VALUE;
+
+  /** Where a group goes that cannot stay. */
+  enum Way {
+    /** Later in its hall, those behind it later too. */
+    PUSH,
+    /** Into the next hole of its hall that moves nobody else. */
+    HOLE,
+    /** Into the soonest hole of any hall that suits. */
+    ANY_HALL
+  }
+
+  private final Problem problem;
+  private final Way way;
+  private final int setup;
+  private final int turnaround;
+  private final int notBefore;
+  private final List<Standee> placed = new ArrayList<>();
+  private List<Standee> waiting = List.of();
+
+  /**
+   * @param notBefore no group moves to before this minute
+   */
+  Shifting(Problem problem, Way way, int notBefore) {
+    this.problem = problem;
+    this.way = way;
+    this.notBefore = notBefore;
+    setup = problem.event.rules().setupMinutes();
+    turnaround = problem.event.rules().turnaroundMinutes();
+  }
+
+  List<Standee> lay(List<Standee> kept) {
+    kept.stream().filter(Standee::frozen).forEach(placed::add);
+    List<Standee> open =
+        new ArrayList<>(
+            kept.stream()
+                .filter(one -> !one.frozen())
+                .sorted(
+                    Comparator.comparing(Standee::slot, roundwright.scheduling.core.Frame.IN_TIME))
+                .toList());
+    while (!open.isEmpty()) {
+      Standee next = open.remove(0);
+      waiting = open;
+      placed.add(place(next));
+    }
+    waiting = List.of();
+    addWhatIsMissing();
+    return placed;
+  }
+
+  private Standee place(Standee one) {
+    Slot slot = one.slot();
+    int ready = ready(slot.round());
+    if (slot.hall() >= 0
+        && slot.start() >= ready
+        && isFree(one, slot.hall(), slot.start(), false)) {
+      return one;
+    }
+    int from = Math.max(ready, Math.max(notBefore, slot.start()));
+    if (slot.hall() >= 0 && way != Way.ANY_HALL) {
+      int start = soonest(one, slot.hall(), from, way == Way.HOLE);
+      if (start != NOWHERE) {
+        return one.at(slot.hall(), slot.stations(), start);
+      }
+    }
+    return anywhere(one, from).or(() -> anywhere(one, ready)).orElse(one);
+  }
+
+  private Optional<Standee> anywhere(Standee one, int from) {
+    int bestHall = -1;
+    int best = NOWHERE;
+    for (int hall : problem.usableHalls(one.slot().round())) {
+      if (problem.mostStations[one.slot().round()][hall] >= one.slot().stations()) {
+        int start = soonest(one, hall, Math.max(from, notBefore), true);
+        if (start < best) {
+          best = start;
+          bestHall = hall;
+        }
+      }
+    }
+    return bestHall < 0
+        ? Optional.empty()
+        : Optional.of(one.at(bestHall, one.slot().stations(), best));
+  }
+
+  private int ready(int round) {
+    int ready = problem.notBefore[round];
+    int before = problem.roundBefore[round];
+    for (Standee one : placed) {
+      if (before >= 0 && one.slot().round() == before) {
+        ready = Math.max(ready, one.slot().end() + turnaround);
+      }
+    }
+    return ready;
+  }
+
+  private int soonest(Standee one, int hall, int from, boolean hole) {
+    int minutes = one.slot().end() - one.slot().start();
+    int grid = problem.grid();
+    for (int w = 0; w < problem.hallFreeFrom[hall].length; w++) {
+      int at = onGrid(hall, Math.max(from, problem.hallFreeFrom[hall][w]), grid);
+      while (at + minutes <= problem.hallFreeTo[hall][w]) {
+        if (isFree(one, hall, at, hole)) {
+          return at;
+        }
+        at = onGrid(hall, at + 1, grid);
+      }
+    }
+    return NOWHERE;
+  }
+
+  private int onGrid(int hall, int minute, int grid) {
+    LocalClock clock = problem.hallClock[hall];
+    int at = minute;
+    while (clock.minuteOfDay(at) % grid != 0 || clock.comesTwice(at)) {
+      at++;
+    }
+    return at;
+  }
+
+  private boolean isFree(Standee one, int hall, int start, boolean hole) {
+    int end = start + one.slot().end() - one.slot().start();
+    if (end > problem.notAfter[one.slot().round()] || !isOpen(hall, start, end)) {
+      return false;
+    }
+    return placed.stream().noneMatch(other -> inTheWay(other, hall, start, end))
+        && !(hole && waiting.stream().anyMatch(other -> inTheWay(other, hall, start, end)));
+  }
+
+  private boolean isOpen(int hall, int start, int end) {
+    for (int w = 0; w < problem.hallFreeFrom[hall].length; w++) {
+      if (problem.hallFreeFrom[hall][w] <= start && end <= problem.hallFreeTo[hall][w]) {
+        return true;
+      }
+    }
+    return false;
+  }
+
+  private boolean inTheWay(Standee other, int hall, int start, int end) {
+    Slot slot = other.slot();
+    return slot.hall() == hall && slot.start() < end + setup && start < slot.end() + setup;
+  }
+
+  /** New groups where a round's entrants are more than its groups may hold. */
+  private void addWhatIsMissing() {
+    Integer[] rounds = new Integer[problem.rounds];
+    Arrays.setAll(rounds, r -> r);
+    Arrays.sort(rounds, Comparator.comparingInt(r -> problem.roundList.get(r).number()));
+    for (int round : rounds) {
+      int left = problem.entrants(round);
+      int number = 0;
+      for (Standee one : placed) {
+        if (one.slot().round() == round) {
+          left -= problem.largestSize(round, one.slot().stations());
+          number = Math.max(number, one.slot().number());
+        }
+      }
+      while (left > 0) {
+        Optional<Standee> added = newGroup(round, ++number, left);
+        if (added.isEmpty()) {
+          return;
+        }
+        placed.add(added.get());
+        left -= problem.largestSize(round, added.get().slot().stations());
+      }
+    }
+  }
+
+  private Optional<Standee> newGroup(int round, int number, int people) {
+    Standee best = null;
+    for (int hall : problem.usableHalls(round)) {
+      int stations =
+          Math.min(problem.mostStations[round][hall], problem.fewestStations(round, people));
+      if (problem.largestSize(round, stations) == 0) {
+        continue;
+      }
+      Slot shape = new Slot(round, number, hall, stations, 0, minutes(round, stations, people));
+      Standee blank = new Standee(Optional.empty(), shape, false);
+      int start = soonest(blank, hall, Math.max(ready(round), notBefore), true);
+      if (start != NOWHERE && (best == null || start < best.slot().start())) {
+        best = blank.at(hall, stations, start);
+      }
+    }
+    return Optional.ofNullable(best);
+  }
+
+  /** Long enough for the round's slowest. */
+  private int minutes(int round, int stations, int people) {
+    var given = problem.roundList.get(round).minutesPerGroup();
+    if (given.isPresent()) {
+      return given.getAsInt();
+    }
+    int size = Math.min(people, problem.largestSize(round, stations));
+    int first = problem.seatStart[round];
+    Integer[] seats = new Integer[problem.entrants(round)];
+    Arrays.setAll(seats, i -> first + i);
+    Arrays.sort(seats, Comparator.comparingLong(seat -> -problem.pace.workMicros[seat]));
+    int scramblers = problem.wanted(round, 1, stations, size);
+    int runners = problem.wanted(round, 2, stations, size);
+    long work = 0;
+    int attempts = 0;
+    long path = 0;
+    for (int i = 0; i < size; i++) {
+      work += problem.pace.workMicros[seats[i]];
+      attempts += problem.pace.attempts[seats[i]];
+      path = Math.max(path, problem.pace.pathMicros(round, seats[i], scramblers, runners));
+    }
+    int active = problem.roundFixed[round] ? size : stations;
+    return problem.pace.leastMinutes(round, work, attempts, path, active, scramblers, runners);
+  }
+}

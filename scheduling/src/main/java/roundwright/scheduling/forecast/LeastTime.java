@@ -168,6 +168,20 @@ public final class LeastTime {
     return discipline;
   }
 
+  Round round() {
+    return round;
+  }
+
+  /** Up to the next multiple of the grid of starts. */
+  int onGrid(double minutes) {
+    int grid = rules.startGridMinutes();
+    return (int) Math.ceil(minutes / grid - 1e-9) * grid;
+  }
+
+  int slotPercentile() {
+    return rules.slotPercentile();
+  }
+
   /** The crew that a group of such a size on so many stations wants. */
   public Round.CrewSize wantedCrew(int size, int stations) {
     int judges = Math.min(stations, size);

@@ -39,7 +39,7 @@ public record RoundForecast(
     return forecasts;
   }
 
-  private static RoundForecast of(Event event, Round round, Entrants entrants) {
+  static RoundForecast of(Event event, Round round, Entrants entrants) {
     List<String> ids = entrants.ids(round.id());
     Optional<Hall> hall = largestHall(event, round);
     List<GroupForecast> groups = new ArrayList<>();
@@ -68,7 +68,7 @@ public record RoundForecast(
     return groups.stream().max(Comparator.comparingInt(GroupForecast::leastMinutes));
   }
 
-  private static Optional<Hall> largestHall(Event event, Round round) {
+  static Optional<Hall> largestHall(Event event, Round round) {
     Discipline discipline =
         event.disciplines().stream()
             .filter(candidate -> candidate.id().equals(round.discipline()))
@@ -90,11 +90,11 @@ public record RoundForecast(
     return Optional.ofNullable(largest);
   }
 
-  private static int stations(Round round, Hall hall) {
+  static int stations(Round round, Hall hall) {
     return Math.min(hall.stations(), round.stations().orElse(Integer.MAX_VALUE));
   }
 
-  private static int capacity(Rules rules, Round round, int stations) {
+  static int capacity(Rules rules, Round round, int stations) {
     if (round.seating().orElse(rules.seating()) == Seating.FIXED) {
       return stations;
     }
@@ -105,8 +105,7 @@ public record RoundForecast(
   }
 
   /** The entrants cut into even groups as the round's seeding wants them. */
-  private static List<List<String>> seeded(
-      LeastTime leastTime, Round round, List<String> ids, int count) {
+  static List<List<String>> seeded(LeastTime leastTime, Round round, List<String> ids, int count) {
     List<String> ranked = new ArrayList<>(ids);
     Comparator<String> byTime = Comparator.comparing(leastTime::expectedSeconds);
     boolean slowestFirst = round.seeding() == Round.Seeding.SLOW_FIRST;

@@ -5,14 +5,17 @@ import java.util.Arrays;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Optional;
+import java.util.OptionalInt;
+import java.util.stream.IntStream;
 import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.core.Slot;
+import roundwright.scheduling.model.Pins;
 
 /**
  * Lays a kept day plan out anew, each group where it stood if it still can be there, and finds a
- * place for those that cannot and for groups that entrants need more. In order of time; three ways
- * to find a place, of which the caller takes what comes out best.
+ * place for those that cannot and for groups that entrants need more. In order of time; several
+ * ways to find a place, of which the caller takes what comes out best.
  */
 final class Shifting {
   private static final int NOWHERE = Integer.MAX_VALUE;
@@ -24,7 +27,9 @@ final class Shifting {
     /** Into the next hole of its hall that moves nobody else. */
     HOLE,
     /** Into the soonest hole of any hall that suits. */
-    ANY_HALL
+    ANY_HALL,
+    /** Nowhere, not even to a pin, and no group is added: moving may break more than staying. */
+    STAY
   }
 
   private final Problem problem;
@@ -48,10 +53,15 @@ final class Shifting {
 
   List<Standee> lay(List<Standee> kept) {
     kept.stream().filter(Standee::frozen).forEach(placed::add);
+    List<Standee> free = new ArrayList<>();
+    for (Standee one : kept) {
+      if (!one.frozen()) {
+        pinned(one).ifPresentOrElse(placed::add, () -> free.add(one));
+      }
+    }
     List<Standee> open =
         new ArrayList<>(
-            kept.stream()
-                .filter(one -> !one.frozen())
+            free.stream()
                 .sorted(
                     Comparator.comparing(Standee::slot, roundwright.scheduling.core.Frame.IN_TIME))
                 .toList());
@@ -61,12 +71,41 @@ final class Shifting {
       placed.add(place(next));
     }
     waiting = List.of();
-    addWhatIsMissing();
+    if (way != Way.STAY) {
+      addWhatIsMissing();
+    }
     return placed;
+  }
+
+  /** Where and when pins put a group; those with the start left open find a place like others. */
+  private Optional<Standee> pinned(Standee one) {
+    String round = problem.roundList.get(one.slot().round()).id();
+    int hall = one.slot().hall();
+    OptionalInt start = OptionalInt.empty();
+    for (Pins.GroupPin pin : problem.event.pins().groups()) {
+      if (pin.round().equals(round) && pin.number() == one.slot().number()) {
+        hall = pin.hall().map(this::hallIndex).orElse(hall);
+        start = pin.start().map(at -> OptionalInt.of(LocalClock.epochMinute(at))).orElse(start);
+      }
+    }
+    if (way == Way.STAY || hall < 0 || (start.isEmpty() && hall == one.slot().hall())) {
+      return Optional.empty();
+    }
+    return Optional.of(one.at(hall, one.slot().stations(), start.orElse(one.slot().start())));
+  }
+
+  private int hallIndex(String id) {
+    return IntStream.range(0, problem.halls)
+        .filter(hall -> problem.hallList.get(hall).id().equals(id))
+        .findFirst()
+        .orElse(-1);
   }
 
   private Standee place(Standee one) {
     Slot slot = one.slot();
+    if (way == Way.STAY && slot.hall() >= 0) {
+      return one;
+    }
     int ready = ready(slot.round());
     if (slot.hall() >= 0
         && slot.start() >= ready
@@ -80,7 +119,16 @@ final class Shifting {
         return one.at(slot.hall(), slot.stations(), start);
       }
     }
-    return anywhere(one, from).or(() -> anywhere(one, ready)).orElse(one);
+    return anywhere(one, from).or(() -> anywhere(one, ready)).orElseGet(() -> somewhere(one));
+  }
+
+  /** Where it stood, or at its time in another hall where its own is no more. */
+  private Standee somewhere(Standee one) {
+    int[] halls = problem.usableHalls(one.slot().round());
+    int instead = halls.length > 0 ? halls[0] : 0;
+    return one.slot().hall() >= 0
+        ? one
+        : one.at(instead, one.slot().stations(), one.slot().start());
   }
 
   private Optional<Standee> anywhere(Standee one, int from) {

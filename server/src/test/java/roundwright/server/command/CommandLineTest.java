@@ -363,6 +363,36 @@ final class CommandLineTest {
   }
 
   @Test
+  void a_forecast_answers_what_if_and_who_goes_on_and_what_overruns() throws IOException {
+    Path event = file("event.json", EVENT);
+    Outcome whatIf = run("forecast", event, "--what-if", "a");
+    assertEquals(0, whatIf.code());
+    List<String> lines = whatIf.out().lines().toList();
+    assertTrue(lines.get(0).startsWith("if ") && lines.get(0).contains("80 in 100"), lines.get(0));
+    assertTrue(lines.get(1).startsWith("as planned                1        2"), lines.get(1));
+    assertTrue(lines.stream().anyMatch(line -> line.startsWith("1 group more")), whatIf.out());
+    Outcome unknown = run("forecast", event, "--what-if", "none");
+    assertRefused("--what-if: there is no round \"none\"; the rounds are a", unknown);
+    assertTrue(run("forecast", event, "--chances").out().contains("No round waits"));
+    String twoRounds =
+        EVENT.replace(
+            "\"crew\": {\"judges\": 1, \"scramblers\": 1, \"runners\": 0}}]",
+            "\"advance\": {\"count\": 1}},"
+                + " {\"id\": \"b\", \"discipline\": \"cube3\", \"number\": 2,"
+                + " \"countedBy\": \"average-of-5\"}]");
+    List<String> going =
+        run("forecast", file("two.json", twoRounds), "--chances").out().lines().toList();
+    assertEquals("b: 1 person on most days", going.get(0));
+    // Ada's average is nearly always the better one
+    assertTrue(going.get(1).matches("  +[89]\\d %  Ada \\(p1\\)"), going.get(1));
+    assertTrue(going.get(2).matches("  +1?\\d %  Ben \\(p2\\)"), going.get(2));
+    Outcome slots = run("forecast", event, "--slots-of", file("plan.json", PLAN));
+    assertEquals(0, slots.code());
+    assertTrue(slots.out().contains("likely to overrun"), slots.out());
+    assertEquals(2, run("forecast", event, "--chances", "--what-if", "a").code());
+  }
+
+  @Test
   void wrong_files_are_refused_on_one_line_each_with_what_to_do() throws IOException {
     Path event = file("event.json", EVENT);
     Path plan = file("plan.json", PLAN);

@@ -22,6 +22,7 @@ import roundwright.scheduling.bounds.StrainBound;
 import roundwright.scheduling.cost.Finding;
 import roundwright.scheduling.cost.Level;
 import roundwright.scheduling.cost.RuleName;
+import roundwright.scheduling.forecast.Overruns;
 import roundwright.scheduling.model.Event;
 import roundwright.scheduling.model.Plan;
 
@@ -39,6 +40,8 @@ import roundwright.scheduling.model.Plan;
     exitCodeList = {"0:no rule is broken", "1:some rule is broken", "2:a file is wrong"},
     footer = {"", "Example: roundwright check event.json plan.json"})
 final class CheckCommand implements Callable<Integer> {
+  private static final int MOST_OVERRUNS = 10;
+
   private static final int MOST_FINDINGS_OF_A_RULE = 20;
 
   @Parameters(index = "0", paramLabel = "EVENT.json", description = "The event file.")
@@ -92,6 +95,7 @@ final class CheckCommand implements Callable<Integer> {
     } else {
       tell(verdict, event, out);
       StrainBound.of(event, plan).ifPresent(bound -> out.printf("%n%s%n", bound.says()));
+      tellOverruns(event, plan, out);
     }
     out.flush();
     return verdict.cost().breaches() == 0 ? 0 : 1;
@@ -118,6 +122,22 @@ final class CheckCommand implements Callable<Integer> {
 
   private static String plain(Number number) {
     return number instanceof BigDecimal decimal ? decimal.toPlainString() : number.toString();
+  }
+
+  /** What the simulation says of the slots; no price, so not among the figures. */
+  private void tellOverruns(Event event, Plan plan, PrintWriter out) {
+    List<Finding> overruns = Overruns.of(event, plan);
+    if (overruns.isEmpty()) {
+      return;
+    }
+    out.println();
+    out.println("Likely to overrun");
+    overruns.stream().limit(MOST_OVERRUNS).forEach(one -> out.println("  " + one.says()));
+    if (overruns.size() > MOST_OVERRUNS) {
+      out.printf(
+          "  and %d more; see them all: roundwright forecast %s --slots-of %s%n",
+          overruns.size() - MOST_OVERRUNS, eventFile, planFile);
+    }
   }
 
   private static void tell(Verdict verdict, Event event, PrintWriter out) {

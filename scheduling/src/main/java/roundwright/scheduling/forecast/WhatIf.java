@@ -1,5 +1,6 @@
 package roundwright.scheduling.forecast;
 
+import java.math.BigDecimal;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
@@ -10,8 +11,8 @@ import roundwright.scheduling.model.Seating;
 
 /**
  * What another number of stations, scramblers, runners or groups would do to a round alone in its
- * largest suitable hall. Each line is forecast over the same days by chance, so that the lines
- * compare; the first is the round as it would be planned.
+ * largest suitable hall; only ways that the hall can hold. Each line is forecast over the same days
+ * by chance, so that the lines compare; the first is the round as it would be planned.
  */
 public record WhatIf(Round round, List<Line> lines) {
   private static final int[] STEPS = {-2, -1, 1, 2};
@@ -60,6 +61,7 @@ public record WhatIf(Round round, List<Line> lines) {
     private final LeastTime leastTime;
     private final long seed;
     private final int groups;
+    private final int free;
     private final int stations;
     private final Round.CrewSize crew;
 
@@ -71,7 +73,7 @@ public record WhatIf(Round round, List<Line> lines) {
       this.leastTime = new LeastTime(event, round);
       this.groups = forecast.groups().size();
       int largest = largestOf(groups);
-      int free = RoundForecast.stations(round, forecast.hall().orElseThrow());
+      this.free = RoundForecast.stations(round, forecast.hall().orElseThrow());
       this.stations = Math.min(free, largest);
       this.crew = leastTime.wantedCrew(largest, stations);
     }
@@ -80,20 +82,24 @@ public record WhatIf(Round round, List<Line> lines) {
       return (entrants.size() + count - 1) / count;
     }
 
+    /** Whether that many stations may hold that many people. */
+    private boolean mayHold(int people, int used) {
+      if (leastTime.seating() == Seating.FIXED) {
+        return people <= used;
+      }
+      BigDecimal fill = round.fill().orElse(event.rules().fill());
+      return fill.multiply(BigDecimal.valueOf(used)).compareTo(BigDecimal.valueOf(people)) >= 0;
+    }
+
     List<Line> lines() {
       List<Line> lines = new ArrayList<>();
       lines.add(line("as planned", groups, stations, crew.scramblers(), crew.runners()));
       boolean sharing = leastTime.seating() == Seating.ROTATING;
       for (int step : STEPS) {
-        boolean used = stations + step >= 1 && stations + step <= largestOf(groups);
-        if (sharing && used) {
-          lines.add(
-              line(
-                  words(step, "station"),
-                  groups,
-                  stations + step,
-                  crew.scramblers(),
-                  crew.runners()));
+        int used = stations + step;
+        boolean useful = used >= 1 && used <= Math.min(free, largestOf(groups));
+        if (sharing && useful && mayHold(largestOf(groups), used)) {
+          lines.add(line(words(step, "station"), groups, used, crew.scramblers(), crew.runners()));
         }
       }
       for (int step : STEPS) {
@@ -111,8 +117,8 @@ public record WhatIf(Round round, List<Line> lines) {
       for (int step : STEPS) {
         int count = groups + step;
         if (count >= 1 && count <= entrants.size()) {
-          int used = Math.min(stations, largestOf(count));
-          if (leastTime.seating() == Seating.FIXED && largestOf(count) > stations) {
+          int used = Math.min(free, largestOf(count));
+          if (!mayHold(largestOf(count), used)) {
             continue;
           }
           Round.CrewSize wanted = leastTime.wantedCrew(largestOf(count), used);

@@ -59,6 +59,30 @@ final class WhatIfTest {
     assertEquals(2 * halves.slotMinutes() + 5, halves.togetherMinutes());
   }
 
+  private static List<String> changes(int stations, int people, int groups) {
+    Scene scene = new Scene().hall("main", stations).discipline("cube3").round("a", "cube3", 1);
+    scene.set("groups", groups).set("countedBy", "average-of-5");
+    for (int i = 0; i < people; i++) {
+      scene.person("p" + (100 + i)).enters("cube3", 15);
+    }
+    Event event = scene.event();
+    WhatIf table = WhatIf.of(event, event.rounds().get(0), 1).orElseThrow();
+    return table.lines().stream().map(line -> line.change() + ": " + line.stations()).toList();
+  }
+
+  @Test
+  void only_ways_that_the_hall_can_hold_are_told() {
+    // Twelve stations hold 19 people, so 40 people need three groups, and 13 stations there are
+    // not.
+    List<String> full = changes(12, 40, 3);
+    assertTrue(full.contains("1 group more: 10"), full.toString());
+    assertTrue(full.stream().noneMatch(change -> change.contains("group fewer")), full.toString());
+    assertTrue(full.stream().noneMatch(change -> change.contains("station more")), full.toString());
+    // Two groups of twelve leave half of 24 stations idle; one group may use them all.
+    List<String> idle = changes(24, 24, 2);
+    assertTrue(idle.contains("1 group fewer: 24"), idle.toString());
+  }
+
   @Test
   void the_first_line_is_the_round_as_forecast_and_nothing_is_below_one() {
     int tables = 0;

@@ -25,9 +25,10 @@ public final class Repair {
    * @param plan priced by the auditor against the kept one
    * @param changed commitments that are not what people were told; a moved one counts once
    * @param told people with such commitments
-   * @param least no plan that fills as many duties changes less
+   * @param least no plan without breaches that fills as many duties changes less; empty where the
+   *     repaired plan has breaches, which may well be what it did not change
    */
-  public record Repaired(Plan plan, int changed, int told, LeastChange least) {
+  public record Repaired(Plan plan, int changed, int told, Optional<LeastChange> least) {
     /** Every change, a sentence each. */
     public List<String> changes() {
       return plan.findings().stream()
@@ -54,12 +55,15 @@ public final class Repair {
     Verdict verdict = new Auditor(event).audit(plan, new Kept(kept, at));
     int changed = amount(verdict, RuleName.CHANGED);
     int told = amount(verdict, RuleName.TOLD);
-    LeastChange least = mending.leastChange(arrangement);
+    Optional<LeastChange> least =
+        verdict.cost().breaches() == 0
+            ? Optional.of(mending.leastChange(arrangement))
+            : Optional.empty();
     return new Repaired(
         new Plan(plan.groups(), Optional.of(verdict.cost()), verdict.findings()),
         changed,
         told,
-        new LeastChange(Math.min(changed, least.commitments()), Math.min(told, least.people())));
+        least);
   }
 
   private static int amount(Verdict verdict, RuleName rule) {

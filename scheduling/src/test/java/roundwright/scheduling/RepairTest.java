@@ -144,7 +144,9 @@ class RepairTest {
     Cost cost = repaired.plan().score().orElseThrow();
     assertEquals(0, cost.breaches(), about);
     assertEquals(0, cost.gaps(), about);
-    assertTrue(repaired.changed() <= 1.1 * repaired.least().commitments() + 1, about);
+    assertTrue(repaired.changed() <= 1.1 * repaired.least().orElseThrow().commitments() + 1, about);
+    assertTrue(repaired.changed() >= repaired.least().orElseThrow().commitments(), about);
+    assertTrue(repaired.told() >= repaired.least().orElseThrow().people(), about);
     assertFalse(repaired.changes().isEmpty());
   }
 
@@ -157,8 +159,18 @@ class RepairTest {
             event, "h0", open -> new Window(open.from().plus(Duration.ofMinutes(20)), open.to()));
     Repair.Repaired repaired = repair(now, kept, Optional.empty(), Scope.ALL);
     assertEquals(0, repaired.plan().score().orElseThrow().breaches());
-    assertTrue(repaired.changed() >= repaired.least().commitments());
-    assertTrue(repaired.least().commitments() > 0);
+    assertTrue(repaired.changed() >= repaired.least().orElseThrow().commitments());
+    assertTrue(repaired.least().orElseThrow().commitments() > 0);
+    Repair.Repaired crews =
+        repair(
+            now,
+            kept,
+            Optional.empty(),
+            new Scope(Optional.empty(), Optional.empty(), java.util.Set.of(), Scope.Depth.CREWS));
+    assertEquals(
+        kept.groups().stream().map(group -> group.id() + group.start()).sorted().toList(),
+        crews.plan().groups().stream().map(group -> group.id() + group.start()).sorted().toList());
+    assertTrue(crews.least().isEmpty(), "a group stays where its hall is closed");
   }
 
   @Test

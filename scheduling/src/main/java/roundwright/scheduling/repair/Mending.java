@@ -70,13 +70,16 @@ public final class Mending {
       if (best != null && halt.now()) {
         break;
       }
+      if (scope.depth() == Scope.Depth.CREWS && way != Shifting.Way.STAY) {
+        continue;
+      }
       Arrangement found = mended(new Shifting(problem, way, days.pastBefore).lay(standees()));
       best = best == null || found.compareTo(best) < 0 ? found : best;
     }
     return best;
   }
 
-  /** At least so much changes in any plan that fills as many duties. */
+  /** At least so much changes in any plan without breaches that fills as many duties. */
   public LeastChange leastChange(Arrangement arrangement) {
     return LeastChange.of(arrangement.board(), days);
   }

@@ -25,6 +25,7 @@ import roundwright.scheduling.file.PlanFile;
 import roundwright.scheduling.model.Event;
 import roundwright.scheduling.model.Plan;
 import roundwright.scheduling.model.Round;
+import roundwright.scheduling.repair.LeastChange;
 import roundwright.scheduling.repair.Scope;
 
 /** Repairs a plan that people have been told, for an event that has changed since. */
@@ -166,10 +167,18 @@ final class RepairCommand implements Callable<Integer> {
 
   private void tell(Repair.Repaired repaired, PrintWriter out) {
     out.printf("Wrote %s: %s%n", planFile, repaired.plan().score().orElseThrow());
+    Optional<LeastChange> least = repaired.least();
     out.printf(
-        "Commitments that change: %d; no repair that fills as many duties changes fewer than %d.%n",
-        repaired.changed(), repaired.least().commitments());
-    out.printf("People to be told: %d; at least %d.%n", repaired.told(), repaired.least().people());
+        "Commitments that change: %d%s.%n",
+        repaired.changed(),
+        least
+            .map(
+                one ->
+                    "; no repair that fills as many duties changes fewer than " + one.commitments())
+            .orElse("; how few must is not known while rules are broken"));
+    out.printf(
+        "People to be told: %d%s.%n",
+        repaired.told(), least.map(one -> "; at least " + one.people()).orElse(""));
     List<String> changes = repaired.changes();
     changes.stream().limit(MOST_CHANGES).forEach(change -> out.println("  " + change));
     if (changes.size() > MOST_CHANGES) {

@@ -26,6 +26,8 @@ import roundwright.scheduling.model.Plan;
  *   <li>{@code tenfold [SIZE ...]}: strain above the bound with a budget of steps, over that with
  *       ten times as many, mean of some events.
  *   <li>{@code growing}: mean strain over 20 seeds with growing budgets of steps.
+ *   <li>{@code outside [NAME ...]}: published problems as events, 60 s each, from the folder that
+ *       ROUNDWRIGHT_OUTSIDE names: the length of the day reached, published, and at most allowed.
  *   <li>{@code disputes COUNT}: that many tiny events made by chance; the engine's own price of
  *       each plan against the auditor's.
  * </ul>
@@ -46,10 +48,11 @@ public final class Bars {
       case "sizes" -> chosen(rest).forEach(Bars::inItsTime);
       case "tenfold" -> chosen(rest).forEach(Bars::tenfold);
       case "growing" -> growing();
+      case "outside" -> OutsideBars.print(rest);
       case "disputes" -> disputes(Long.parseLong(rest.get(0)));
       default ->
           throw new IllegalArgumentException(
-              what + " is none of sizes, tenfold, growing, disputes COUNT");
+              what + " is none of sizes, tenfold, growing, outside, disputes COUNT");
     }
   }
 

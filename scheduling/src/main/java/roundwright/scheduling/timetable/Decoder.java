@@ -3,6 +3,7 @@ package roundwright.scheduling.timetable;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
+import java.util.stream.IntStream;
 import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.core.Slot;
@@ -40,6 +41,10 @@ final class Decoder {
   private final boolean[] placed;
   private final int[][] pinStart;
   private final boolean hasPinnedStarts;
+
+  /** Of each round: those that share an entrant with it, where these are to be kept apart. */
+  private final int[][] sharing;
+
   long shortage;
 
   Decoder(Problem problem, Supply supply) {
@@ -75,10 +80,27 @@ final class Decoder {
       }
     }
     hasPinnedStarts = pinned;
+    sharing = new int[problem.rounds][0];
+  }
+
+  /** From now on two rounds with an entrant in common do not meet, where each is one group. */
+  void keepSharingRoundsApart() {
+    boolean[][] share = new boolean[problem.rounds][problem.rounds];
+    for (int[] own : problem.personSeats) {
+      for (int one : own) {
+        for (int other : own) {
+          share[problem.seatRound[one]][problem.seatRound[other]] |= one != other;
+        }
+      }
+    }
+    for (int r = 0; r < problem.rounds; r++) {
+      boolean[] row = share[r];
+      sharing[r] = IntStream.range(0, row.length).filter(other -> row[other]).toArray();
+    }
   }
 
   private static int[] dayStarts(Problem problem) {
-    return java.util.stream.IntStream.range(0, problem.halls)
+    return IntStream.range(0, problem.halls)
         .flatMap(
             h ->
                 Arrays.stream(problem.hallFreeFrom[h])
@@ -185,14 +207,17 @@ final class Decoder {
   }
 
   private int findStart(Shape own, int group, int from) {
-    int found = search(own, group, from, true);
+    int found = search(own, group, from, true, true);
+    if (found == NOT_FOUND && sharing[own.round].length > 0) {
+      found = search(own, group, from, true, false);
+    }
     if (found == NOT_FOUND) {
-      found = search(own, group, from, false);
+      found = search(own, group, from, false, false);
     }
     return found == NOT_FOUND ? afterEverything(own, group, from) : found;
   }
 
-  private int search(Shape own, int group, int from, boolean withSupply) {
+  private int search(Shape own, int group, int from, boolean withSupply, boolean apart) {
     int hall = own.hall[group];
     int minutes = own.minutes[group];
     int[] freeFrom = problem.hallFreeFrom[hall];
@@ -207,7 +232,10 @@ final class Decoder {
         } else if (hasNoName(hall, at) || hasNoName(hall, at + minutes)) {
           at = onGrid(hall, at + 1);
         } else {
-          later = withSupply ? afterShortage(keeps, at, at + minutes) : at;
+          later = apart ? afterMeeting(own, at) : at;
+          if (later == at && withSupply) {
+            later = afterShortage(keeps, at, at + minutes);
+          }
           if (later == at) {
             return at;
           }
@@ -235,6 +263,25 @@ final class Decoder {
       }
     }
     return at;
+  }
+
+  /**
+   * The soonest minute at which no round in the way is left with an entrant in common, who has
+   * neither another group nor can be in two places; or the same.
+   */
+  private int afterMeeting(Shape own, int at) {
+    int later = at;
+    int end = at + own.minutes[0];
+    for (int other : sharing[own.round]) {
+      if (placed[other]) {
+        int way = problem.way[own.hall[0]][shape[other].hall[0]];
+        int over = lastEnd[other] + way;
+        if (at < over && firstStart[other] < end + way) {
+          later = Math.max(later, over);
+        }
+      }
+    }
+    return later;
   }
 
   /** By bisection: groups in a hall follow each other, but for pins, which stand first of all. */

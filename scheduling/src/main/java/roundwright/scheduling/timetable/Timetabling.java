@@ -45,6 +45,10 @@ public final class Timetabling {
       shapes.add(Shape.ofRound(problem, supply, r));
     }
     rounds = IntStream.range(0, problem.rounds).filter(r -> !shapes.get(r).isEmpty()).toArray();
+    if (shapes.stream().flatMap(List::stream).allMatch(one -> one.groups == 1)) {
+      // Nobody can change to another group then, so that a meeting is never worth trying.
+      decoder.keepSharingRoundsApart();
+    }
     shape = new Shape[problem.rounds];
     earliest = new int[problem.rounds];
     firstOrder =

@@ -28,6 +28,11 @@ final class DayPlanSearch {
   private static final double AGAIN_PART = 0.04;
   private static final double HOT = 300;
   private static final double LUKEWARM = 60;
+  private static final double COLD = 3;
+  private static final double SLOTS_PART = 0.4;
+  private static final double COLD_PART = 0.1;
+  private static final double LONG_PART = 0.15;
+  private static final double PACKED_UNTIL = 0.85;
   private static final double WARMER = 1.6;
   private static final int MOST_LAYOUTS = 1_000_000;
   private static final int LAYOUTS_PER_START = 5_000;
@@ -91,7 +96,7 @@ final class DayPlanSearch {
     timetabling.startAnew();
     tryOut(timetabling.search(pressure, HOT, dice, l -> l / (double) FEWEST_LAYOUTS), false);
     stand();
-    boolean inTime = start();
+    boolean inTime = (!timetabling.timesOnly() || pack()) && start();
     if (inTime && best.hard > 0) {
       inTime = mend();
     }
@@ -103,6 +108,42 @@ final class DayPlanSearch {
 
   private double used() {
     return budget.over() ? 1 : budget.used(moves, best.hard > 0);
+  }
+
+  /**
+   * Where times are all there is to choose, no arrangement can tell more than the outlook: fewest
+   * slots, then long searches by the outlook alone; false where the time was over.
+   */
+  private boolean pack() {
+    if (timetabling.slotsAlike()) {
+      packIntoSlots();
+      if (!tryOut(search(COLD, COLD_PART, MOST_LAYOUTS), false)) {
+        return false;
+      }
+      stand();
+    }
+    while (used() < PACKED_UNTIL) {
+      timetabling.startAnew();
+      if (!tryOut(search(HOT, LONG_PART, MOST_LAYOUTS), false)) {
+        return false;
+      }
+      if (price(latest) <= standingPrice) {
+        stand();
+      }
+    }
+    timetabling.goBackTo(standing);
+    return true;
+  }
+
+  private void packIntoSlots() {
+    double usedBefore = used();
+    double movesBefore = moves;
+    timetabling.packIntoSlots(
+        dice,
+        tries -> {
+          moves = movesBefore + tries;
+          return (used() - usedBefore) / SLOTS_PART;
+        });
   }
 
   /** Several starts, to go on from the best; false where the time was over. */

@@ -36,7 +36,7 @@ class OutsideEventsTest {
         Arguments.of("myciel3", OutsideEvents.Graph.mycielski(3), 11, 20, 4, 4),
         Arguments.of("myciel4", OutsideEvents.Graph.mycielski(4), 23, 71, 5, 5),
         Arguments.of("queen5_5", OutsideEvents.Graph.queen(5), 25, 160, 5, 5),
-        Arguments.of("queen6_6", OutsideEvents.Graph.queen(6), 36, 290, 7, 8));
+        Arguments.of("queen6_6", OutsideEvents.Graph.queen(6), 36, 290, 7, 7));
   }
 
   @ParameterizedTest
@@ -65,9 +65,9 @@ class OutsideEventsTest {
   void anOpenShopOfFourHallsAndFourPeopleComesNearItsMakespan(int number, int makespan)
       throws IOException {
     String name = "ta4x4_" + number + "os.txt";
-    int minutes = planned(OutsideEvents.read(published("open-shop", name)), 300_000, name);
+    int minutes = planned(OutsideEvents.read(published("open-shop", name)), 1_000_000, name);
     assertTrue(
-        minutes >= makespan && minutes <= makespan * 1.03,
+        minutes >= makespan && minutes <= makespan * 1.01,
         name + ": " + minutes + " for " + makespan);
   }
 

@@ -43,7 +43,7 @@ final class Decoder {
   private final boolean hasPinnedStarts;
 
   /** Of each round: those that share an entrant with it, where these are to be kept apart. */
-  private final int[][] sharing;
+  final int[][] sharing;
 
   long shortage;
 

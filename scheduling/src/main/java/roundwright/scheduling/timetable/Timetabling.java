@@ -30,6 +30,7 @@ public final class Timetabling {
   private final int[] firstOrder;
   private final Shape[] shape;
   private final int[] earliest;
+  private final boolean timesOnly;
 
   private Dice dice;
   private double pressure;
@@ -45,10 +46,16 @@ public final class Timetabling {
       shapes.add(Shape.ofRound(problem, supply, r));
     }
     rounds = IntStream.range(0, problem.rounds).filter(r -> !shapes.get(r).isEmpty()).toArray();
-    if (shapes.stream().flatMap(List::stream).allMatch(one -> one.groups == 1)) {
+    boolean oneGroupEach = shapes.stream().flatMap(List::stream).allMatch(one -> one.groups == 1);
+    if (oneGroupEach) {
       // Nobody can change to another group then, so that a meeting is never worth trying.
       decoder.keepSharingRoundsApart();
     }
+    timesOnly =
+        oneGroupEach
+            && shapes.stream()
+                .flatMap(List::stream)
+                .allMatch(one -> IntStream.of(one.crew[0]).sum() == 0);
     shape = new Shape[problem.rounds];
     earliest = new int[problem.rounds];
     firstOrder =
@@ -127,6 +134,47 @@ public final class Timetabling {
     }
     goBackTo(bestChoice);
     return best;
+  }
+
+  /**
+   * Whether every round is one group without a crew, as where an organiser plans times before
+   * anybody is asked to help.
+   */
+  public boolean timesOnly() {
+    return timesOnly;
+  }
+
+  /** Whether besides all rounds are of one length, so that time is a row of slots. */
+  public boolean slotsAlike() {
+    return timesOnly && IntStream.of(rounds).map(r -> shape[r].minutes[0]).distinct().count() < 2;
+  }
+
+  /**
+   * Stands where rounds that share an entrant or a hall take the fewest slots: for rounds of one
+   * group each, best where they are of one length.
+   */
+  public void packIntoSlots(Dice chance, Budget budget) {
+    int[][] apart = new int[rounds.length][];
+    for (int i = 0; i < rounds.length; i++) {
+      int r = rounds[i];
+      apart[i] =
+          IntStream.range(0, rounds.length)
+              .filter(j -> rounds[j] != r && mustNotMeet(r, rounds[j]))
+              .toArray();
+    }
+    int[] slot = new FewestSlots(apart, chance).search(budget);
+    Arrays.fill(earliest, Problem.NEVER);
+    order =
+        IntStream.range(0, rounds.length)
+            .boxed()
+            .sorted(Comparator.comparingInt((Integer i) -> slot[i]))
+            .mapToInt(i -> rounds[i])
+            .toArray();
+  }
+
+  private boolean mustNotMeet(int one, int other) {
+    return shape[one].hall[0] == shape[other].hall[0]
+        || Arrays.binarySearch(decoder.sharing[one], other) >= 0;
   }
 
   /** What the next search goes on from: the layout found last, unless another is put back. */
@@ -243,7 +291,7 @@ public final class Timetabling {
     if (kind < 3 && shapes.get(r).size() > 1) {
       return otherShape(r);
     }
-    if (kind < 6) {
+    if (kind < (timesOnly ? 3 : 6)) {
       return otherEarliest(r);
     }
     return otherOrder(kind);

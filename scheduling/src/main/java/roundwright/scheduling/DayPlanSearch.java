@@ -80,6 +80,7 @@ final class DayPlanSearch {
   private Timetabling.Choice standing;
   private double standingPrice;
   private Arrangement best;
+  private double bestOverrun;
   private Arrangement latest;
 
   DayPlanSearch(Problem problem, RuleBook book, Dice dice, Budget budget) {
@@ -244,11 +245,19 @@ final class DayPlanSearch {
       moves += MOVES_PER_POLISHED_PLACE * frame.places;
     }
     latest = crewing.arrangement();
-    if (best == null || latest.compareTo(best) < 0) {
+    double overrun = timetabling.overrunPrice();
+    if (best == null || isBetter(overrun)) {
       best = latest;
+      bestOverrun = overrun;
     }
     budget.found(best, Progress.Stage.FIRST_PLAN);
     return true;
+  }
+
+  private boolean isBetter(double overrun) {
+    return latest.hard != best.hard
+        ? latest.hard < best.hard
+        : latest.strain / MILLIONTHS + overrun < best.strain / MILLIONTHS + bestOverrun;
   }
 
   private void learn() {
@@ -260,9 +269,13 @@ final class DayPlanSearch {
     }
   }
 
-  private static double price(Arrangement arrangement) {
+  /** Of the latest arrangement, over the layout that the timetable now stands at. */
+  private double price(Arrangement arrangement) {
     long breaches = arrangement.hard / RuleBook.BREACH;
     long gaps = arrangement.hard % RuleBook.BREACH;
-    return breaches * BREACH + gaps * GAP + arrangement.strain / MILLIONTHS;
+    return breaches * BREACH
+        + gaps * GAP
+        + arrangement.strain / MILLIONTHS
+        + timetabling.overrunPrice();
   }
 }

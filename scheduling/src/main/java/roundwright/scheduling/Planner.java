@@ -6,13 +6,11 @@ import java.util.Collections;
 import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
-import java.util.Optional;
 import java.util.concurrent.ExecutionException;
 import java.util.concurrent.ExecutorService;
 import java.util.concurrent.Executors;
 import java.util.concurrent.Future;
 import roundwright.scheduling.audit.Auditor;
-import roundwright.scheduling.audit.Verdict;
 import roundwright.scheduling.core.Dice;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.cost.Cost;
@@ -63,12 +61,8 @@ public final class Planner {
   private Plan plan() {
     Arrangement best = effort.threads() == 1 ? search(0) : Collections.min(searchSeveral());
     spending.report(Progress.Stage.DONE, best.hard, best.strain, List.of());
-    return signed(Written.plan(best));
-  }
-
-  private Plan signed(Plan plan) {
-    Verdict verdict = new Auditor(event).audit(plan);
-    return new Plan(plan.groups(), Optional.of(verdict.cost()), verdict.findings());
+    Plan plan = Written.plan(best);
+    return Written.signed(event, plan, new Auditor(event).audit(plan));
   }
 
   private List<Arrangement> searchSeveral() {

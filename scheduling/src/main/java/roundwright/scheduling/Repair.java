@@ -59,11 +59,7 @@ public final class Repair {
         verdict.cost().breaches() == 0
             ? Optional.of(mending.leastChange(arrangement))
             : Optional.empty();
-    return new Repaired(
-        new Plan(plan.groups(), Optional.of(verdict.cost()), verdict.findings()),
-        changed,
-        told,
-        least);
+    return new Repaired(Written.signed(event, plan, verdict), changed, told, least);
   }
 
   private static int amount(Verdict verdict, RuleName rule) {

@@ -8,10 +8,14 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
+import roundwright.scheduling.audit.Verdict;
 import roundwright.scheduling.core.Frame;
 import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.core.Problem;
+import roundwright.scheduling.cost.Finding;
 import roundwright.scheduling.crewing.Arrangement;
+import roundwright.scheduling.forecast.Overruns;
+import roundwright.scheduling.model.Event;
 import roundwright.scheduling.model.Group;
 import roundwright.scheduling.model.Plan;
 
@@ -70,6 +74,13 @@ final class Written {
               new Group.Crew(crews.get(g * 3), crews.get(g * 3 + 1), crews.get(g * 3 + 2))));
     }
     return new Plan(groups, Optional.empty(), List.of());
+  }
+
+  /** The plan with its price and all that is to be said of it, likely overruns last. */
+  static Plan signed(Event event, Plan plan, Verdict verdict) {
+    List<Finding> findings = new ArrayList<>(verdict.findings());
+    findings.addAll(Overruns.of(event, plan));
+    return new Plan(plan.groups(), Optional.of(verdict.cost()), findings);
   }
 
   private static List<List<String>> lists(int count) {

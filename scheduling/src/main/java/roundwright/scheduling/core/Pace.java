@@ -14,6 +14,7 @@ import roundwright.scheduling.model.Round;
 public final class Pace {
   private static final long MICROS = 1_000_000L;
   private static final int FINEST_SLACK_DECIMALS = 4;
+  private static final long FINEST_PARTS = 10_000;
 
   /** Of each seat: attempts, and the whole work at the station in microseconds. */
   public final int[] attempts;
@@ -52,6 +53,17 @@ public final class Pace {
     slackDenominator = BigDecimal.TEN.pow(decimals).longValueExact();
     gridMinutes = problem.grid();
     gridMicros = gridMinutes * 60L * MICROS;
+  }
+
+  private Pace(Pace pace, long slackNumerator, long slackDenominator) {
+    attempts = pace.attempts;
+    workMicros = pace.workMicros;
+    scrambleMicros = pace.scrambleMicros;
+    carryMicros = pace.carryMicros;
+    gridMicros = pace.gridMicros;
+    gridMinutes = pace.gridMinutes;
+    this.slackNumerator = slackNumerator;
+    this.slackDenominator = slackDenominator;
   }
 
   private void measure(Problem problem, int seat, Round round, Discipline discipline) {
@@ -121,5 +133,13 @@ public final class Pace {
     long least = Math.multiplyExact(micros, slackNumerator);
     long slot = Math.multiplyExact(gridMicros, slackDenominator) * servers;
     return (least + slot - 1) / slot;
+  }
+
+  /** The same pace with another slack, where that is the larger one. */
+  public Pace withSlack(double slack) {
+    long parts = (long) Math.ceil(slack * FINEST_PARTS);
+    return parts * slackDenominator <= slackNumerator * FINEST_PARTS
+        ? this
+        : new Pace(this, parts, FINEST_PARTS);
   }
 }

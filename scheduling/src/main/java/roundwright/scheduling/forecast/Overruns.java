@@ -26,6 +26,11 @@ public final class Overruns {
   /** The same days for every plan: what is shown may change with the plan, never by chance. */
   private static final long SEED = 20_270_508;
 
+  private static final int FIRST_RUNS = 40;
+
+  /** A few days tell a percentile to within two or three in a hundred. */
+  private static final double SURELY_LONG_ENOUGH = 0.93;
+
   private final Event event;
   private final Map<String, LeastTime> leastTimes = new HashMap<>();
   private final Map<String, Integer> stationsByHall = new HashMap<>();
@@ -59,6 +64,9 @@ public final class Overruns {
     }
     double slot = (group.end().getEpochSecond() - group.start().getEpochSecond()) / 60.0;
     Round.CrewSize crew = leastTime.wantedCrew(group.competitors().size(), group.stations());
+    if (minutes(leastTime, group, group.stations(), crew, FIRST_RUNS) < SURELY_LONG_ENOUGH * slot) {
+      return Optional.empty();
+    }
     double minutes = minutes(leastTime, group, group.stations(), crew);
     BigDecimal over = BigDecimal.valueOf(minutes - slot).setScale(1, RoundingMode.HALF_UP);
     if (over.signum() <= 0) {
@@ -129,14 +137,13 @@ public final class Overruns {
   }
 
   private double minutes(LeastTime leastTime, Group group, int stations, Round.CrewSize crew) {
+    return minutes(leastTime, group, stations, crew, GroupSimulation.RUNS);
+  }
+
+  private double minutes(
+      LeastTime leastTime, Group group, int stations, Round.CrewSize crew, int runs) {
     return GroupSimulation.of(
-            leastTime,
-            group.competitors(),
-            stations,
-            crew,
-            GroupSimulation.SIGMA,
-            GroupSimulation.RUNS,
-            SEED)
+            leastTime, group.competitors(), stations, crew, GroupSimulation.SIGMA, runs, SEED)
         .minutes(event.rules().slotPercentile());
   }
 }

@@ -41,19 +41,34 @@ public record RoundForecast(
 
   static RoundForecast of(Event event, Round round, Entrants entrants) {
     List<String> ids = entrants.ids(round.id());
-    Optional<Hall> hall = largestHall(event, round);
+    Cut cut = plainest(event, round, ids);
     List<GroupForecast> groups = new ArrayList<>();
-    if (hall.isPresent() && !ids.isEmpty()) {
-      int stations = stations(round, hall.get());
-      int fewest = 1 + (ids.size() - 1) / capacity(event.rules(), round, stations);
-      int count = Math.min(ids.size(), round.groups().orElse(fewest));
-      LeastTime leastTime = new LeastTime(event, round);
-      for (List<String> competitors : seeded(leastTime, round, ids, count)) {
-        groups.add(
-            GroupForecast.of(leastTime, competitors, Math.min(stations, competitors.size())));
-      }
+    for (List<String> competitors : cut.competitors()) {
+      int stations = Math.min(cut.stations(), competitors.size());
+      groups.add(GroupForecast.of(cut.leastTime(), competitors, stations));
     }
-    return new RoundForecast(round, ids.size(), entrants.areMerelyLikely(round.id()), hall, groups);
+    boolean likely = entrants.areMerelyLikely(round.id());
+    return new RoundForecast(round, ids.size(), likely, largestHall(event, round), groups);
+  }
+
+  /**
+   * The fewest groups of a round in its largest suitable hall, in the order of its seeding.
+   *
+   * @param stations that each may use at most; 0 where no hall suits
+   * @param competitors empty where there is no entrant or no hall
+   */
+  record Cut(LeastTime leastTime, int stations, List<List<String>> competitors) {}
+
+  static Cut plainest(Event event, Round round, List<String> ids) {
+    LeastTime leastTime = new LeastTime(event, round);
+    Optional<Hall> hall = largestHall(event, round);
+    if (hall.isEmpty() || ids.isEmpty()) {
+      return new Cut(leastTime, 0, List.of());
+    }
+    int stations = stations(round, hall.get());
+    int fewest = 1 + (ids.size() - 1) / capacity(event.rules(), round, stations);
+    int count = Math.min(ids.size(), round.groups().orElse(fewest));
+    return new Cut(leastTime, stations, seeded(leastTime, round, ids, count));
   }
 
   /** Minutes of the longest group's slot: as laid down, else the least time. */

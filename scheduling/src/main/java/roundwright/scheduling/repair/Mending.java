@@ -3,6 +3,7 @@ package roundwright.scheduling.repair;
 import java.time.Instant;
 import java.time.ZoneId;
 import java.util.ArrayList;
+import java.util.Collections;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
@@ -26,9 +27,9 @@ import roundwright.scheduling.rules.RuleBook;
 
 /**
  * The repair of a kept plan for an event that has changed: the day plan laid out anew with each
- * group where it stood if it can be, everybody carried over, and what is then broken or empty
- * mended with the fewest changes: first exactly, moment by moment, and by search only where that
- * leaves something to mend. One use each; not thread-safe.
+ * group where it stood if it can be and a search for those that cannot, everybody carried over, and
+ * what is then broken or empty mended with the fewest changes: first exactly, moment by moment, and
+ * by search only where that leaves something to mend. One use each; not thread-safe.
  */
 public final class Mending {
   /** Changes before comfort: one outweighs what a day can gain in any other rule. */
@@ -65,18 +66,29 @@ public final class Mending {
 
   /** The repaired plan as an arrangement over its day plan. */
   public Arrangement mended() {
-    Arrangement best = null;
-    for (Shifting.Way way : Shifting.Way.values()) {
-      if (best != null && halt.now()) {
-        break;
-      }
-      if (scope.depth() == Scope.Depth.CREWS && way != Shifting.Way.STAY) {
-        continue;
-      }
-      Arrangement found = mended(new Shifting(problem, way, days.pastBefore).lay(standees()));
-      best = best == null || found.compareTo(best) < 0 ? found : best;
+    if (scope.depth() == Scope.Depth.CREWS) {
+      return mended(asItStood());
     }
-    return best;
+    Arrangement moved = mended(relocated());
+    if (moved.hard == 0 || halt.now()) {
+      return moved;
+    }
+    return Collections.min(List.of(moved, mended(asItStood())));
+  }
+
+  /** Moving may break more than staying: the one layout that is never worse than what was kept. */
+  private List<Standee> asItStood() {
+    return new Shifting(problem, Shifting.Way.STAY, days.pastBefore).lay(standees());
+  }
+
+  private List<Standee> relocated() {
+    Shifting shifting = new Shifting(problem, Shifting.Way.MAKE_ROOM, days.pastBefore);
+    List<Standee> laid = shifting.lay(standees());
+    boolean[] free = new boolean[laid.size()];
+    for (int g = 0; g < free.length; g++) {
+      free[g] = shifting.mayMove(laid.get(g));
+    }
+    return new Relocating(problem, laid, free, days.pastBefore, seed, halt).found();
   }
 
   /** At least so much changes in any plan without breaches that fills as many duties. */

@@ -13,22 +13,18 @@ import roundwright.scheduling.core.Slot;
 import roundwright.scheduling.model.Pins;
 
 /**
- * Lays a kept day plan out anew, each group where it stood if it still can be there, and finds a
- * place for those that cannot and for groups that entrants need more. In order of time; several
- * ways to find a place, of which the caller takes what comes out best.
+ * Lays a kept day plan out anew, each group where it stood if it still can be there, and finds the
+ * soonest place for those that cannot and for groups that entrants need more. In order of time, and
+ * no group makes room for another: that is left to {@link Relocating}.
  */
 final class Shifting {
   private static final int NOWHERE = Integer.MAX_VALUE;
 
-  /** Where a group goes that cannot stay. */
+  /** What becomes of a group that cannot stay. */
   enum Way {
-    /** Later in its hall, those behind it later too. */
-    PUSH,
-    /** Into the next hole of its hall that moves nobody else. */
-    HOLE,
-    /** Into the soonest hole of any hall that suits. */
-    ANY_HALL,
-    /** Nowhere, not even to a pin, and no group is added: moving may break more than staying. */
+    /** Into the soonest hole of any hall that suits; where there is none, in others' way. */
+    MAKE_ROOM,
+    /** It stays all the same, even where a pin wants it elsewhere, and no group is added. */
     STAY
   }
 
@@ -77,6 +73,11 @@ final class Shifting {
     return placed;
   }
 
+  /** Whether a group may be put elsewhere: it has not begun and no pin says where or when. */
+  boolean mayMove(Standee one) {
+    return !one.frozen() && pinned(one).isEmpty();
+  }
+
   /** Where and when pins put a group; those with the start left open find a place like others. */
   private Optional<Standee> pinned(Standee one) {
     String round = problem.roundList.get(one.slot().round()).id();
@@ -109,16 +110,10 @@ final class Shifting {
     int ready = ready(slot.round());
     if (slot.hall() >= 0
         && slot.start() >= ready
-        && isFree(one, slot.hall(), slot.start(), false)) {
+        && isFree(one, slot.hall(), slot.start(), List.of())) {
       return one;
     }
     int from = Math.max(ready, Math.max(notBefore, slot.start()));
-    if (slot.hall() >= 0 && way != Way.ANY_HALL) {
-      int start = soonest(one, slot.hall(), from, way == Way.HOLE);
-      if (start != NOWHERE) {
-        return one.at(slot.hall(), slot.stations(), start);
-      }
-    }
     return anywhere(one, from).or(() -> anywhere(one, ready)).orElseGet(() -> somewhere(one));
   }
 
@@ -136,7 +131,7 @@ final class Shifting {
     int best = NOWHERE;
     for (int hall : problem.usableHalls(one.slot().round())) {
       if (problem.mostStations[one.slot().round()][hall] >= one.slot().stations()) {
-        int start = soonest(one, hall, Math.max(from, notBefore), true);
+        int start = soonest(one, hall, Math.max(from, notBefore));
         if (start < best) {
           best = start;
           bestHall = hall;
@@ -159,13 +154,13 @@ final class Shifting {
     return ready;
   }
 
-  private int soonest(Standee one, int hall, int from, boolean hole) {
+  private int soonest(Standee one, int hall, int from) {
     int minutes = one.slot().end() - one.slot().start();
     int grid = problem.grid();
     for (int w = 0; w < problem.hallFreeFrom[hall].length; w++) {
       int at = onGrid(hall, Math.max(from, problem.hallFreeFrom[hall][w]), grid);
       while (at + minutes <= problem.hallFreeTo[hall][w]) {
-        if (isFree(one, hall, at, hole)) {
+        if (isFree(one, hall, at, waiting)) {
           return at;
         }
         at = onGrid(hall, at + 1, grid);
@@ -183,13 +178,13 @@ final class Shifting {
     return at;
   }
 
-  private boolean isFree(Standee one, int hall, int start, boolean hole) {
+  private boolean isFree(Standee one, int hall, int start, List<Standee> alsoHeed) {
     int end = start + one.slot().end() - one.slot().start();
     if (end > problem.notAfter[one.slot().round()] || !isOpen(hall, start, end)) {
       return false;
     }
     return placed.stream().noneMatch(other -> inTheWay(other, hall, start, end))
-        && !(hole && waiting.stream().anyMatch(other -> inTheWay(other, hall, start, end)));
+        && alsoHeed.stream().noneMatch(other -> inTheWay(other, hall, start, end));
   }
 
   private boolean isOpen(int hall, int start, int end) {
@@ -233,6 +228,7 @@ final class Shifting {
 
   private Optional<Standee> newGroup(int round, int number, int people) {
     Standee best = null;
+    Standee inTheWay = null;
     for (int hall : problem.usableHalls(round)) {
       int stations =
           Math.min(problem.mostStations[round][hall], problem.fewestStations(round, people));
@@ -241,12 +237,26 @@ final class Shifting {
       }
       Slot shape = new Slot(round, number, hall, stations, 0, minutes(round, stations, people));
       Standee blank = new Standee(Optional.empty(), shape, false);
-      int start = soonest(blank, hall, Math.max(ready(round), notBefore), true);
+      int start = soonest(blank, hall, Math.max(ready(round), notBefore));
       if (start != NOWHERE && (best == null || start < best.slot().start())) {
         best = blank.at(hall, stations, start);
       }
+      inTheWay = inTheWay == null ? inOthersWay(blank, hall) : inTheWay;
     }
-    return Optional.ofNullable(best);
+    return Optional.ofNullable(best == null ? inTheWay : best);
+  }
+
+  /** At the first opening from which it could be there; none where there is none to come. */
+  private Standee inOthersWay(Standee blank, int hall) {
+    int from = Math.max(ready(blank.slot().round()), notBefore);
+    int minutes = blank.slot().end() - blank.slot().start();
+    for (int w = 0; w < problem.hallFreeFrom[hall].length; w++) {
+      int at = onGrid(hall, Math.max(from, problem.hallFreeFrom[hall][w]), problem.grid());
+      if (at + minutes <= problem.hallFreeTo[hall][w]) {
+        return blank.at(hall, blank.slot().stations(), at);
+      }
+    }
+    return null;
   }
 
   /** Long enough for the round's slowest. */

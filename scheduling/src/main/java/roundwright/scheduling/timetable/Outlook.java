@@ -27,6 +27,9 @@ final class Outlook {
   private static final double LOAD = 1.3;
   private static final double BREATHING = 0.3;
 
+  /** No rule prices it: dearer than what a minute of more slot costs, cheaper than any breach. */
+  private static final double OVERRUN_MINUTE = 20;
+
   private static final double SHORT_PERSON_STRETCH = 15;
   private static final double PLACE_MOVED = 2;
   private static final double WRONG_SEEDING = 500;
@@ -252,8 +255,12 @@ final class Outlook {
     return beyond * BREACH / 2;
   }
 
+  static double overrunPrice(Shape shape) {
+    return OVERRUN_MINUTE * shape.shortMinutes();
+  }
+
   private double priceRound(int r, Shape shape) {
-    double price = 0;
+    double price = overrunPrice(shape);
     if (problem.roundList.get(r).groups().isEmpty() && fewest[r] > 0) {
       price += extraGroup * Math.max(0, shape.groups - fewest[r]);
     }

@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
 import java.util.OptionalInt;
+import java.util.stream.Stream;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.model.Pins;
 import roundwright.scheduling.model.Round;
@@ -24,6 +25,9 @@ final class Shape {
   final int[] size;
   final int[] minutes;
 
+  /** Of each group: the slot that is likely to do, not under its least time. */
+  private final int[] likelyMinutes;
+
   /** Most people each group may hold with its stations in use. */
   final int[] capacity;
 
@@ -40,12 +44,18 @@ final class Shape {
     stations = new int[groups];
     size = new int[groups];
     minutes = new int[groups];
+    likelyMinutes = new int[groups];
     capacity = new int[groups];
     crew = new int[groups][3];
   }
 
-  /** The shapes worth trying, the plainest first; none where the round has no entrants. */
-  static List<Shape> ofRound(Problem problem, Supply supply, int round) {
+  /**
+   * The shapes worth trying, the plainest first; none where the round has no entrants.
+   *
+   * @param stretch how many times their largest bound groups are likely to take, in the order of
+   *     the seeding; empty where nothing is known of it
+   */
+  static List<Shape> ofRound(Problem problem, Supply supply, int round, double[] stretch) {
     int entrants = problem.entrants(round);
     List<Shape> found = new ArrayList<>();
     if (entrants == 0) {
@@ -68,9 +78,10 @@ final class Shape {
           continue;
         }
         for (int level = 0; level < STATION_LEVELS; level++) {
-          Shape shape = make(problem, round, cycle, groups, level);
+          Shape shape = make(problem, round, cycle, groups, level, stretch);
           shape.kept = supply.kept(shape);
-          List.of(shape, shape.allAsLongAsTheLongest()).stream()
+          Shape likely = shape.with(shape.likelyMinutes);
+          Stream.of(likely, likely.allAsLongAsTheLongest(), shape, shape.allAsLongAsTheLongest())
               .filter(one -> found.stream().noneMatch(one::same))
               .forEach(found::add);
         }
@@ -105,17 +116,31 @@ final class Shape {
 
   /** The same with room in each group for everybody: for rounds with people who come late. */
   private Shape allAsLongAsTheLongest() {
+    int[] same = new int[groups];
+    Arrays.fill(same, Arrays.stream(minutes).max().getAsInt());
+    return with(same);
+  }
+
+  private Shape with(int[] otherMinutes) {
     Shape shape = new Shape(round, groups);
     System.arraycopy(hall, 0, shape.hall, 0, groups);
     System.arraycopy(stations, 0, shape.stations, 0, groups);
     System.arraycopy(size, 0, shape.size, 0, groups);
     System.arraycopy(capacity, 0, shape.capacity, 0, groups);
-    Arrays.fill(shape.minutes, Arrays.stream(minutes).max().getAsInt());
-    for (int i = 0; i < groups; i++) {
-      shape.crew[i] = crew[i];
-    }
+    System.arraycopy(otherMinutes, 0, shape.minutes, 0, groups);
+    System.arraycopy(likelyMinutes, 0, shape.likelyMinutes, 0, groups);
+    System.arraycopy(crew, 0, shape.crew, 0, groups);
     shape.kept = kept;
     return shape;
+  }
+
+  /** Minutes by which its slots are shorter than is likely to do, over all groups. */
+  int shortMinutes() {
+    int sum = 0;
+    for (int i = 0; i < groups; i++) {
+      sum += Math.max(0, likelyMinutes[i] - minutes[i]);
+    }
+    return sum;
   }
 
   /** The halls its groups take in turn: each alone, each two together, all together. */
@@ -153,7 +178,8 @@ final class Shape {
     return groups;
   }
 
-  private static Shape make(Problem problem, int round, int[] cycle, int groups, int level) {
+  private static Shape make(
+      Problem problem, int round, int[] cycle, int groups, int level, double[] stretch) {
     Shape shape = new Shape(round, groups);
     int entrants = problem.entrants(round);
     int inUse = 0;
@@ -176,7 +202,7 @@ final class Shape {
       before = upTo;
     }
     shape.chooseStations(problem, most, level);
-    shape.measure(problem);
+    shape.measure(problem, stretch);
     return shape;
   }
 
@@ -201,7 +227,7 @@ final class Shape {
     }
   }
 
-  private void measure(Problem problem) {
+  private void measure(Problem problem, double[] stretch) {
     Round given = problem.roundList.get(round);
     int[][] members = members(problem);
     for (int i = 0; i < groups; i++) {
@@ -211,6 +237,7 @@ final class Shape {
       }
       if (given.minutesPerGroup().isPresent()) {
         minutes[i] = given.minutesPerGroup().getAsInt();
+        likelyMinutes[i] = minutes[i];
         continue;
       }
       long work = 0;
@@ -224,6 +251,12 @@ final class Shape {
       int active = problem.roundFixed[round] ? size[i] : stations[i];
       minutes[i] =
           problem.pace.leastMinutes(round, work, attempts, longest, active, crew[i][1], crew[i][2]);
+      double likely = stretch.length == 0 ? 1 : stretch[i * stretch.length / groups];
+      likelyMinutes[i] =
+          problem
+              .pace
+              .withSlack(likely)
+              .leastMinutes(round, work, attempts, longest, active, crew[i][1], crew[i][2]);
     }
   }
 

@@ -9,6 +9,7 @@ import java.util.stream.IntStream;
 import roundwright.scheduling.core.Dice;
 import roundwright.scheduling.core.Problem;
 import roundwright.scheduling.core.Slot;
+import roundwright.scheduling.forecast.Stretch;
 
 /**
  * Rounds to groups, halls and starts: simulated annealing (Kirkpatrick, Gelatt and Vecchi 1983)
@@ -42,8 +43,9 @@ public final class Timetabling {
     Supply supply = new Supply(problem);
     decoder = new Decoder(problem, supply);
     outlook = new Outlook(problem, decoder, supply);
+    List<double[]> stretches = Stretch.ofRounds(problem.event);
     for (int r = 0; r < problem.rounds; r++) {
-      shapes.add(Shape.ofRound(problem, supply, r));
+      shapes.add(Shape.ofRound(problem, supply, r, stretches.get(r)));
     }
     rounds = IntStream.range(0, problem.rounds).filter(r -> !shapes.get(r).isEmpty()).toArray();
     boolean oneGroupEach = shapes.stream().flatMap(List::stream).allMatch(one -> one.groups == 1);
@@ -253,7 +255,7 @@ public final class Timetabling {
     add(one, load, 1);
     int fullest = IntStream.of(one.hall).map(hall -> load[hall]).max().getAsInt();
     add(one, load, -1);
-    return fullest + minutes(one) / 4;
+    return fullest + minutes(one) / 4 + one.shortMinutes() * 2;
   }
 
   private void add(Shape one, int[] load, int sign) {
@@ -274,6 +276,11 @@ public final class Timetabling {
     if (shape[round] != null && shapes.get(round).size() > 1) {
       outlook.raiseShape(shape[round]);
     }
+  }
+
+  /** What the slots where it stands, shorter than is likely to do, count for, in strain units. */
+  public double overrunPrice() {
+    return IntStream.of(rounds).mapToDouble(r -> Outlook.overrunPrice(shape[r])).sum();
   }
 
   private double lay() {

@@ -51,7 +51,7 @@ public final class Repair {
     Spending spending = new Spending(effort, progress);
     Mending mending = new Mending(event, kept, at, scope, effort.seed(), spending::over);
     Arrangement arrangement = mending.mended();
-    Plan plan = Written.plan(arrangement, kept);
+    Plan plan = Written.plan(arrangement, kept, at);
     Verdict verdict = new Auditor(event).audit(plan, new Kept(kept, at));
     int changed = amount(verdict, RuleName.CHANGED);
     int told = amount(verdict, RuleName.TOLD);

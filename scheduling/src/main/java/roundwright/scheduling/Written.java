@@ -1,5 +1,6 @@
 package roundwright.scheduling;
 
+import java.time.Instant;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.HashMap;
@@ -27,11 +28,14 @@ final class Written {
   private Written() {}
 
   static Plan plan(Arrangement arrangement) {
-    return plan(arrangement, new Plan(List.of(), Optional.empty(), List.of()));
+    return plan(arrangement, new Plan(List.of(), Optional.empty(), List.of()), Optional.empty());
   }
 
-  /** The same where some of the groups have been in a plan before, whose ids they keep. */
-  static Plan plan(Arrangement arrangement, Plan kept) {
+  /**
+   * The same where some of the groups have been in a plan before, whose ids they keep. Who solves
+   * in a group that begins before {@code at} stays in it, also once they are no entrant.
+   */
+  static Plan plan(Arrangement arrangement, Plan kept, Optional<Instant> at) {
     Frame frame = arrangement.frame;
     Problem problem = frame.problem;
     List<List<String>> competitors = lists(frame.groups);
@@ -49,6 +53,9 @@ final class Written {
             .get(frame.placeGroup[place] * 3 + frame.placeRole[place])
             .add(problem.personList.get(person).id());
       }
+    }
+    if (at.isPresent()) {
+      keepBegun(frame, kept, at.get(), competitors);
     }
     crews.forEach(crew -> crew.sort(Comparator.naturalOrder()));
     List<Group> groups = new ArrayList<>();
@@ -74,6 +81,23 @@ final class Written {
               new Group.Crew(crews.get(g * 3), crews.get(g * 3 + 1), crews.get(g * 3 + 2))));
     }
     return new Plan(groups, Optional.empty(), List.of());
+  }
+
+  private static void keepBegun(
+      Frame frame, Plan kept, Instant at, List<List<String>> competitors) {
+    Set<String> people = new HashSet<>();
+    frame.problem.personList.forEach(person -> people.add(person.id()));
+    for (Group group : kept.groups()) {
+      for (int g = 0; g < frame.groups && group.start().isBefore(at); g++) {
+        String round = frame.problem.roundList.get(frame.round[g]).id();
+        if (frame.frozen[g] && frame.number[g] == group.number() && round.equals(group.round())) {
+          List<String> now = competitors.get(g);
+          group.competitors().stream()
+              .filter(id -> people.contains(id) && !now.contains(id))
+              .forEach(now::add);
+        }
+      }
+    }
   }
 
   /** The plan with its price and all that is to be said of it, likely overruns last. */

@@ -190,12 +190,11 @@ final class Moves {
     }
     int[] groups = frame.groupsOf[problem.seatRound[seat]];
     int from = board.seatGroup[seat];
+    if (from < 0) {
+      return false;
+    }
     int to = groups[dice.below(groups.length)];
-    if (from < 0
-        || from == to
-        || frame.frozen[to]
-        || frame.seatPin[seat] >= 0
-        || !refill.reseat(seat, to)) {
+    if (from == to || frame.frozen[to] || frame.seatPin[seat] >= 0 || !refill.reseat(seat, to)) {
       return false;
     }
     if (dice.below(4) > 0) {

@@ -11,6 +11,7 @@ import java.util.Optional;
 import java.util.stream.IntStream;
 import roundwright.scheduling.core.Board;
 import roundwright.scheduling.core.Dice;
+import roundwright.scheduling.core.GroupRow;
 import roundwright.scheduling.core.KeptDays;
 import roundwright.scheduling.core.LocalClock;
 import roundwright.scheduling.core.Problem;
@@ -69,11 +70,40 @@ public final class Mending {
     if (scope.depth() == Scope.Depth.CREWS) {
       return mended(asItStood());
     }
-    Arrangement moved = mended(relocated());
-    if (moved.hard == 0 || halt.now()) {
-      return moved;
+    Arrangement moved = mended(relocated(standees()));
+    if (moved.hard > 0 && !halt.now()) {
+      Optional<List<Standee>> longer = longer(moved.board());
+      if (longer.isPresent()) {
+        moved = Collections.min(List.of(moved, mended(relocated(longer.get()))));
+      }
     }
-    return Collections.min(List.of(moved, mended(asItStood())));
+    return moved.hard == 0 || halt.now()
+        ? moved
+        : Collections.min(List.of(moved, mended(asItStood())));
+  }
+
+  /** The kept groups with slots as long as those who are now in them need; empty if all have. */
+  private Optional<List<Standee>> longer(Board board) {
+    Map<Long, Integer> needed = new HashMap<>();
+    GroupRow row = new GroupRow();
+    for (int g = 0; g < board.frame.groups; g++) {
+      row.load(board, g);
+      int least = row.leastMinutes();
+      if (!board.frame.frozen[g] && least > board.frame.end[g] - board.frame.start[g]) {
+        needed.put(key(board.frame.round[g], board.frame.number[g]), least);
+      }
+    }
+    List<Standee> standees = new ArrayList<>(standees());
+    standees.replaceAll(
+        one -> {
+          Integer minutes = needed.get(key(one.slot().round(), one.slot().number()));
+          return minutes == null ? one : one.lasting(minutes);
+        });
+    return needed.isEmpty() ? Optional.empty() : Optional.of(standees);
+  }
+
+  private static long key(int round, int number) {
+    return (long) round << 32 | number;
   }
 
   /** Moving may break more than staying: the one layout that is never worse than what was kept. */
@@ -81,9 +111,9 @@ public final class Mending {
     return new Shifting(problem, Shifting.Way.STAY, days.pastBefore).lay(standees());
   }
 
-  private List<Standee> relocated() {
+  private List<Standee> relocated(List<Standee> standees) {
     Shifting shifting = new Shifting(problem, Shifting.Way.MAKE_ROOM, days.pastBefore);
-    List<Standee> laid = shifting.lay(standees());
+    List<Standee> laid = shifting.lay(standees);
     boolean[] free = new boolean[laid.size()];
     for (int g = 0; g < free.length; g++) {
       free[g] = shifting.mayMove(laid.get(g));
@@ -136,11 +166,11 @@ public final class Mending {
     List<Standee> standees = new ArrayList<>();
     for (Group group : kept.groups()) {
       Integer round = rounds.get(group.round());
-      if (round == null || problem.entrants(round) == 0) {
+      int start = LocalClock.epochMinute(group.start());
+      if (round == null || (problem.entrants(round) == 0 && start >= days.pastBefore)) {
         continue;
       }
       int hall = halls.getOrDefault(group.hall(), -1);
-      int start = LocalClock.epochMinute(group.start());
       Slot slot =
           new Slot(
               round,
@@ -164,7 +194,7 @@ public final class Mending {
         .orElse(event.zone());
   }
 
-  /** No more groups of a round than it has entrants, and none that has lost everybody. */
+  /** No group that is still to come and has lost everybody, where the others have the room. */
   private List<Standee> withoutEmpty(List<Standee> laid) {
     List<Standee> left = new ArrayList<>(laid);
     for (int round = 0; round < problem.rounds; round++) {
@@ -188,6 +218,7 @@ public final class Mending {
 
   private boolean hasLostEverybody(Standee one) {
     return one.kept().isPresent()
+        && one.slot().start() >= days.pastBefore
         && one.kept().get().competitors().stream()
             .noneMatch(
                 id ->

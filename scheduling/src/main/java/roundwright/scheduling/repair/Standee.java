@@ -19,4 +19,17 @@ record Standee(Optional<Group> kept, Slot slot, boolean frozen) {
         new Slot(slot.round(), slot.number(), hall, stations, start, start + minutes),
         frozen);
   }
+
+  Standee lasting(int minutes) {
+    return new Standee(
+        kept,
+        new Slot(
+            slot.round(),
+            slot.number(),
+            slot.hall(),
+            slot.stations(),
+            slot.start(),
+            slot.start() + minutes),
+        frozen);
+  }
 }
